@@ -1,0 +1,72 @@
+import type { Timing } from '../core/ephemeris.ts';
+import type { Interval } from '../core/interval.ts';
+import type { StarParameters } from '../core/light-curve.ts';
+import type { Recipe } from '../core/recipe.ts';
+import type { CaseNumbers, CaseOrigin, Confidence, MarkKind, RulingKind, Target } from './document.ts';
+
+/** Who does it and when: the caller's clock and ids, so that applying a command stays pure. */
+export interface CommandStamp {
+  readonly at: string;
+  readonly analyst: string;
+  readonly app: string;
+  /** A fresh unique id for each call. */
+  readonly newId: () => string;
+}
+
+/** Every change a document can undergo. `id` fields of new things are given by the caller. */
+export type Command =
+  | { readonly kind: 'name session'; readonly name: string }
+  | { readonly kind: 'name analyst'; readonly analyst: string }
+  | { readonly kind: 'add targets'; readonly targets: readonly Target[] }
+  | { readonly kind: 'remove target'; readonly targetId: string }
+  | {
+      readonly kind: 'describe stars';
+      readonly rows: readonly { readonly label: string; readonly star: StarParameters }[];
+    }
+  | { readonly kind: 'set recipe'; readonly targetId: string; readonly recipe: Recipe }
+  | { readonly kind: 'add mark'; readonly targetId: string; readonly markId: string; readonly mark: MarkFields }
+  | {
+      readonly kind: 'edit mark';
+      readonly targetId: string;
+      readonly markId: string;
+      readonly mark: Partial<MarkFields>;
+    }
+  | { readonly kind: 'delete mark'; readonly targetId: string; readonly markId: string }
+  | {
+      readonly kind: 'make case';
+      readonly targetId: string;
+      readonly caseId: string;
+      readonly origin: CaseOrigin;
+      readonly timing: Timing;
+      readonly numbers: CaseNumbers | undefined;
+    }
+  | {
+      readonly kind: 'time case';
+      readonly targetId: string;
+      readonly caseId: string;
+      readonly timing: Timing;
+      readonly numbers: CaseNumbers | undefined;
+    }
+  | { readonly kind: 'delete case'; readonly targetId: string; readonly caseId: string }
+  | { readonly kind: 'rule'; readonly targetId: string; readonly caseId: string; readonly ruling: RulingFields }
+  | {
+      readonly kind: 'park';
+      readonly targetId: string;
+      readonly caseId: string;
+      readonly reason: string;
+      readonly until: string | undefined;
+    }
+  | { readonly kind: 'unpark'; readonly targetId: string; readonly caseId: string };
+
+export interface MarkFields {
+  readonly kind: MarkKind;
+  readonly interval: Interval;
+  readonly note: string;
+}
+
+export interface RulingFields {
+  readonly kind: RulingKind;
+  readonly reasons: readonly string[];
+  readonly confidence: Confidence;
+  readonly note: string;
+}
