@@ -1,8 +1,9 @@
+import type { BoxSearchSettings } from '../core/box-search-settings.ts';
 import type { Timing } from '../core/ephemeris.ts';
 import type { Interval } from '../core/interval.ts';
 import type { StarParameters } from '../core/light-curve.ts';
 import type { Recipe } from '../core/recipe.ts';
-import type { CaseNumbers, CaseOrigin, Confidence, MarkKind, RulingKind, Target } from './document.ts';
+import type { CaseNumbers, CaseOrigin, Confidence, FileRecord, MarkKind, RulingKind, Target } from './document.ts';
 
 /** Who does it and when: the caller's clock and ids, so that applying a command stays pure. */
 export interface CommandStamp {
@@ -24,6 +25,8 @@ export type Command =
       readonly rows: readonly { readonly label: string; readonly star: StarParameters }[];
     }
   | { readonly kind: 'set recipe'; readonly targetId: string; readonly recipe: Recipe }
+  | { readonly kind: 'set search'; readonly targetId: string; readonly search: Partial<BoxSearchSettings> }
+  | { readonly kind: 'remap file'; readonly targetId: string; readonly file: FileRecord; readonly star: StarParameters }
   | { readonly kind: 'add mark'; readonly targetId: string; readonly markId: string; readonly mark: MarkFields }
   | {
       readonly kind: 'edit mark';

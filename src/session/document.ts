@@ -1,3 +1,4 @@
+import type { BoxSearchSettings } from '../core/box-search-settings.ts';
 import type { Timing } from '../core/ephemeris.ts';
 import type { FileMapping } from '../core/file-mapping.ts';
 import type { Interval } from '../core/interval.ts';
@@ -34,6 +35,8 @@ export interface Target {
   readonly files: readonly FileRecord[];
   readonly star: StarParameters;
   readonly recipe: Recipe;
+  /** What the analyst set of this target's search; the rest is chosen by the search. */
+  readonly search: Partial<BoxSearchSettings>;
   readonly marks: readonly Mark[];
   readonly cases: readonly Case[];
 }
