@@ -9,16 +9,17 @@ import { linearTicks, shortestDecimals, type Ticks } from './ticks.ts';
 
 const TITLE_X_PX = 11;
 
-/** As many y ticks as stand apart, 24 px at least. */
-export function yTicks(frame: Frame): Ticks {
-  return linearTicks(frame.y.domain, Math.max(2, Math.floor((frame.bottom - frame.top) / 30)));
+/** Up to seven y ticks, 18 px apart at least; none while there are no data, as no number would be true. */
+export function yTicks(frame: Frame, empty = false): Ticks {
+  if (empty) return { major: [], minor: [], segments: [], decimals: 0 };
+  return linearTicks(frame.y.domain, Math.min(7, Math.max(2, Math.floor((frame.bottom - frame.top) / 18))));
 }
 
 export function timeTicks(frame: Frame): Ticks {
   const width = frame.right - frame.left;
   const rough = linearTicks(frame.x.domain, Math.max(2, Math.floor(width / 55)));
   const longest = Math.max(...rough.major.map((value) => numberLabel(value, rough.decimals).length), 1);
-  return linearTicks(frame.x.domain, Math.max(2, Math.floor(width / Math.max(48, longest * 7 + 18))));
+  return linearTicks(frame.x.domain, Math.max(2, Math.floor(width / Math.max(48, longest * 6 + 14))));
 }
 
 /** Horizontal grid, the zero line stronger. Drawn before the data. */

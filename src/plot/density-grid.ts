@@ -38,8 +38,8 @@ export function resetDensityGrid(grid: DensityGrid, width: number, height: numbe
 }
 
 /**
- * Adds points to the grid. Points left or right of it are passed over, points above or below count in its first or
- * last row, NaN are passed over. Order does not matter, so a fold can be counted as it is.
+ * Adds points to the grid. Points left or right of it and NaN are passed over; points above or below count in its first
+ * or last row, or are passed over too. Order does not matter, so a fold can be counted as it is.
  *
  * @param x, y length n, looked at from index `from` (included) to `to` (not)
  * @param xScale, yScale linear; the grid's corner is the start of xScale's range and the end of yScale's
@@ -52,6 +52,7 @@ export function countPoints(
   to: number,
   xScale: Scale,
   yScale: Scale,
+  outside: 'edge' | 'hide',
 ): void {
   const { width, height, counts, lowestRow, highestRow } = grid;
   const x0 = xScale.domain[0];
@@ -59,10 +60,12 @@ export function countPoints(
   const yTop = yScale.domain[1];
   const ySlope = yScale.slope;
   const lastRow = height - 1;
+  const hide = outside === 'hide';
   for (let i = from; i < to; i += 1) {
     const column = Math.floor((x[i]! - x0) * xSlope);
     const depth = (y[i]! - yTop) * ySlope;
     if (!(column >= 0 && column < width) || Number.isNaN(depth)) continue;
+    if (hide && (depth < 0 || depth > height)) continue;
     const row = depth <= 0 ? 0 : depth >= lastRow ? lastRow : Math.floor(depth);
     counts[row * width + column]! += 1;
     if (row > lowestRow[column]!) lowestRow[column] = row;

@@ -16,7 +16,7 @@ import { type Span, wideSpan } from './span.ts';
 import type { SceneBasis } from './surface/mount-plot.ts';
 import type { SurfaceSize } from './surface/plot-surface.ts';
 import type { PlotTheme } from './theme.ts';
-import { linearTicks } from './ticks.ts';
+import { linearTicks, steppedTicks } from './ticks.ts';
 
 /** A period, epoch and duration in days, as a hand sets them. */
 export interface HandEphemeris {
@@ -100,13 +100,18 @@ export function drawFold(
   updateFold(scratch.work, scene, ephemeris, frame.x.domain);
   const look = caseLook(scene.caseNumber, theme);
   const curve = foldCurve(scene, ephemeris, frame.x.domain);
-  const ticks = yTicks(frame);
+  const ticks = yTicks(frame, scene.time.length === 0);
   drawGrid(context, frame, ticks, theme);
   if (scene.mode === 'full') drawFullPhase(context, frame, theme, scratch, look);
-  else drawEvent(context, frame, scene, ephemeris, theme, scratch, curve, look);
+  else if (scene.time.length > 0) drawEvent(context, frame, scene, ephemeris, theme, scratch, curve, look);
   drawLeftAxis(context, frame, ticks, theme, frame.bottom - frame.top > 70 ? scene.yTitle : '');
   const lowest = drawResiduals(context, frame, scene, theme, scratch, curve, look);
-  drawMarginScale(context, lowest, scene.mode === 'full' ? linearTicks(frame.x.domain, 4) : timeTicks(lowest), theme);
+  drawMarginScale(
+    context,
+    lowest,
+    scene.mode === 'full' ? steppedTicks(frame.x.domain, 0.25, 5) : timeTicks(lowest),
+    theme,
+  );
   if (scene.mode === 'event')
     drawTitle(context, theme, scene.xTitle, (frame.left + frame.right) / 2, frame.heightPx - 9);
 }
@@ -196,7 +201,13 @@ function residualFrame(
 
 function hasResiduals(scene: FoldScene, size: { readonly heightPx: number }): boolean {
   const modelled = scene.curve !== undefined || scene.boxDepthPpm !== undefined;
-  return scene.residuals === true && modelled && scene.mode === 'event' && size.heightPx >= RESIDUAL_LEAST_PX;
+  return (
+    scene.residuals === true &&
+    modelled &&
+    scene.time.length > 0 &&
+    scene.mode === 'event' &&
+    size.heightPx >= RESIDUAL_LEAST_PX
+  );
 }
 
 function residualHeight(heightPx: number): number {

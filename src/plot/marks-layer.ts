@@ -66,8 +66,8 @@ function drawBand(context: DrawContext, frame: Frame, mark: PlotMark, theme: Plo
 function drawGrips(context: DrawContext, band: Band, theme: PlotTheme): void {
   const middle = (band.top + band.bottom) / 2;
   context.fillStyle = theme.flame;
-  context.fillRect(crisp(band.left) - 3, middle - 8, 5, 16);
-  context.fillRect(crisp(band.right) - 2, middle - 8, 5, 16);
+  context.fillRect(crisp(band.left) - 4, middle - 8, 4, 16);
+  context.fillRect(crisp(band.right), middle - 8, 4, 16);
 }
 
 /** Dip none, artefact diagonal, exclude crossed, flare dots: the kind is told without its colour. */

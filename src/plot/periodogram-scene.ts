@@ -87,10 +87,10 @@ export function drawPeriodogramBase(
   scene: PeriodogramScene,
   theme: PlotTheme,
 ): void {
-  const ticks = yTicks(frame);
+  const ticks = yTicks(frame, scene.periods.length === 0);
   drawGrid(context, frame, ticks, theme);
   drawPeriodogram(context, frame, scene.periods, scene.values, theme);
-  if (scene.threshold) drawThreshold(context, frame, scene.threshold, theme);
+  if (scene.threshold && scene.periods.length > 0) drawThreshold(context, frame, scene.threshold, theme);
   drawLeftAxis(context, frame, ticks, theme, scene.yTitle);
   drawMarginScale(context, frame, logTicks(frame.x.domain, Math.floor((frame.right - frame.left) / 70)), theme);
   if (scene.xTitle !== undefined && frame.heightPx - frame.bottom > 30) {
@@ -109,13 +109,14 @@ function drawThreshold(
   drawHaloText(context, theme, threshold.label, frame.left + 10, y - 9, { colour: theme.flame, font: uiFont(theme) });
 }
 
+/** Boxes that labels must not touch. */
 interface Taken {
   readonly left: number;
   readonly right: number;
   readonly y: number;
 }
 
-/** Aliases, then peaks from the strongest down; a label that would touch an earlier one is left out. */
+/** Aliases, then peaks from the strongest down; a label that would touch a shape or an earlier label is left out. */
 export function drawPeaks(
   context: DrawContext,
   frame: Frame,
@@ -123,18 +124,31 @@ export function drawPeaks(
   highlightedPeriodDays: number | undefined,
   theme: PlotTheme,
 ): void {
-  const taken: Taken[] = [];
   const chosen = (peak: PeriodogramPeak) => samePeriod(peak.periodDays, scene.selectedPeriodDays);
   const peaks = scene.peaks
     .filter((peak) => seen(frame, peak.periodDays))
     .sort((a, b) => Number(chosen(b)) - Number(chosen(a)) || b.value - a.value);
-  for (const peak of peaks) drawPeak(context, frame, peak, chosen(peak), theme, taken);
-  for (const alias of scene.aliases ?? [])
-    if (seen(frame, alias.periodDays)) drawAlias(context, frame, alias, theme, taken);
-  if (scene.selectedPeriodDays !== undefined && !peaks.some(chosen))
-    drawPicked(context, frame, scene.selectedPeriodDays, theme);
+  const aliases = (scene.aliases ?? []).filter((alias) => seen(frame, alias.periodDays));
+  for (const alias of aliases) drawAlias(context, frame, alias, theme);
+  for (const peak of peaks.toReversed()) drawPeak(context, frame, peak, chosen(peak), theme);
+  const picked = scene.periods.length > 0 && !peaks.some(chosen);
+  if (scene.selectedPeriodDays !== undefined && picked) drawPicked(context, frame, scene.selectedPeriodDays, theme);
+  const taken: Taken[] = peaks.map((peak) => around(toPx(frame.x, peak.periodDays), 7, peakY(frame, peak)));
+  for (const alias of aliases) taken.push(around(toPx(frame.x, alias.periodDays), 5, aliasY(frame)));
+  for (const peak of peaks) labelPeak(context, frame, peak, chosen(peak), theme, taken);
+  for (const alias of aliases) labelAlias(context, frame, alias, theme, taken);
   const lit = peaks.find((peak) => samePeriod(peak.periodDays, highlightedPeriodDays));
   if (lit) drawRing(context, theme, toPx(frame.x, lit.periodDays), peakY(frame, lit), 8);
+}
+
+function around(x: number, half: number, y: number): Taken {
+  return { left: x - half, right: x + half, y };
+}
+
+function isFree(place: Taken, taken: readonly Taken[]): boolean {
+  return !taken.some(
+    (other) => Math.abs(other.y - place.y) < 10.5 && place.left < other.right && place.right > other.left,
+  );
 }
 
 /** Equal as far as two readings of one peak are: a part in a million. */
@@ -150,14 +164,7 @@ function peakY(frame: Frame, peak: PeriodogramPeak): number {
   return Math.max(12, toPx(frame.y, peak.value) - 9);
 }
 
-function drawPeak(
-  context: DrawContext,
-  frame: Frame,
-  peak: PeriodogramPeak,
-  chosen: boolean,
-  theme: PlotTheme,
-  taken: Taken[],
-): void {
+function drawPeak(context: DrawContext, frame: Frame, peak: PeriodogramPeak, chosen: boolean, theme: PlotTheme): void {
   const look = caseLook(peak.caseNumber, theme);
   const x = toPx(frame.x, peak.periodDays);
   const y = peakY(frame, peak);
@@ -166,54 +173,60 @@ function drawPeak(
     drawLine(context, crisp(x), y, crisp(x), frame.bottom, { colour: look.colour, dash: look.dash });
   drawCaseShape(context, theme, look, x, y, claimed ? 4 : 2.8);
   if (chosen) drawRing(context, theme, x, y, 7.5);
+}
+
+/** Right of its shape, else left of it, else over it. */
+function labelPeak(
+  context: DrawContext,
+  frame: Frame,
+  peak: PeriodogramPeak,
+  chosen: boolean,
+  theme: PlotTheme,
+  taken: Taken[],
+): void {
   const font = uiFont(theme, 12, chosen ? 600 : 400);
-  placeLabel(context, frame, theme, peak.label, x, y, { colour: chosen ? theme.ink : theme.ink2, font }, taken);
+  context.font = font;
+  const half = context.measureText(peak.label).width / 2;
+  const x = toPx(frame.x, peak.periodDays);
+  const y = peakY(frame, peak);
+  const places = [around(x + 10 + half, half, y), around(x - 10 - half, half, y), around(x, half, y - 14)];
+  const fits = (place: Taken) => place.left > frame.left + 2 && place.right < frame.widthPx - 2 && place.y > 7;
+  const place = places.find((candidate) => fits(candidate) && isFree(candidate, taken));
+  if (!place) return;
+  taken.push(place);
+  drawHaloText(context, theme, peak.label, place.left, place.y, { colour: chosen ? theme.ink : theme.ink2, font });
 }
 
 const ALIAS_HEIGHT = 0.45;
 
-function drawAlias(
+function aliasY(frame: Frame): number {
+  return frame.bottom - (frame.bottom - frame.top) * ALIAS_HEIGHT;
+}
+
+/** Aliases stand hollow at one height: they are derived, not measured. */
+function drawAlias(context: DrawContext, frame: Frame, alias: PeriodogramAlias, theme: PlotTheme): void {
+  const look = caseLook(alias.caseNumber, theme);
+  const x = toPx(frame.x, alias.periodDays);
+  drawLine(context, crisp(x), aliasY(frame), crisp(x), frame.bottom, { colour: look.colour, dash: [2, 3] });
+  drawCaseShape(context, theme, look, x, aliasY(frame), 2.8, true);
+}
+
+function labelAlias(
   context: DrawContext,
   frame: Frame,
   alias: PeriodogramAlias,
   theme: PlotTheme,
   taken: Taken[],
 ): void {
-  const look = caseLook(alias.caseNumber, theme);
   const x = toPx(frame.x, alias.periodDays);
-  const y = frame.bottom - (frame.bottom - frame.top) * ALIAS_HEIGHT;
-  drawLine(context, crisp(x), y, crisp(x), frame.bottom, { colour: look.colour, dash: [2, 3] });
-  drawCaseShape(context, theme, look, x, y, 2.8, true);
-  const half = 12;
-  if (taken.some((other) => Math.abs(other.y - (y - 11)) < 13 && x - half < other.right && x + half > other.left))
-    return;
-  taken.push({ left: x - half, right: x + half, y: y - 11 });
-  drawHaloText(context, theme, alias.label, x, y - 11, {
+  const place = around(x, 12, aliasY(frame) - 11);
+  if (!isFree(place, taken)) return;
+  taken.push(place);
+  drawHaloText(context, theme, alias.label, x, place.y, {
     colour: theme.ink2,
     font: symbolFont(theme),
     align: 'center',
   });
-}
-
-function placeLabel(
-  context: DrawContext,
-  frame: Frame,
-  theme: PlotTheme,
-  label: string,
-  x: number,
-  y: number,
-  look: { readonly colour: string; readonly font: string },
-  taken: Taken[],
-): void {
-  context.font = look.font;
-  const width = context.measureText(label).width;
-  const toRight = x + 10 + width <= frame.widthPx - 2;
-  const left = toRight ? x + 10 : x - 10 - width;
-  const place = { left: Math.min(left, x - 6), right: Math.max(left + width, x + 6), y };
-  if (taken.some((other) => Math.abs(other.y - y) < 14 && place.left < other.right + 4 && place.right > other.left - 4))
-    return;
-  taken.push(place);
-  drawHaloText(context, theme, label, left, y, look);
 }
 
 /** A period picked off the peaks. */

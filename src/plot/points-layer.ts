@@ -42,8 +42,8 @@ function drawDensity(context: DrawContext, frame: Frame, cloud: PointCloud, them
   const width = Math.max(1, Math.round(frame.right - frame.left));
   const height = Math.max(1, Math.round(frame.bottom - frame.top));
   resetDensityGrid(grid, width, height);
-  countPoints(grid, cloud.x, cloud.y, cloud.from, cloud.to, frame.x, frame.y);
-  context.drawPixels(paintDensity(grid, theme.density, packColour(theme.ink)), frame.left, frame.top);
+  countPoints(grid, cloud.x, cloud.y, cloud.from, cloud.to, frame.x, frame.y, cloud.outside);
+  context.drawPixels(paintDensity(grid, theme.density, packColour(theme.point)), frame.left, frame.top);
 }
 
 function drawSquares(context: DrawContext, frame: Frame, cloud: PointCloud, theme: PlotTheme): void {

@@ -47,7 +47,7 @@ export function stripPlot(): PlotSpec<StripScene, StripGesture, StripIntent> {
 /** The cursor that another plot moved, on its measured point where it names one. */
 function linkedCursor(scene: StripScene): { time: number; value: number | undefined } | undefined {
   const { cursorTime: time, series } = scene;
-  if (time === undefined) return undefined;
+  if (time === undefined || series.time.length === 0) return undefined;
   const index = nearestIndex(series.time, time);
   return { time, value: index !== undefined && series.time[index] === time ? series.values[index] : undefined };
 }

@@ -58,7 +58,7 @@ export function drawStrip(
   grid: DensityGrid = makeDensityGrid(),
 ): void {
   const { series, dropped, trend } = scene;
-  const ticks = yTicks(frame);
+  const ticks = yTicks(frame, series.time.length === 0 && !dropped?.time.length);
   drawGrid(context, frame, ticks, theme);
   drawLanes(context, frame, scene.lanes, theme);
   const { from, to } = visibleRange(series.time, frame.x.domain);

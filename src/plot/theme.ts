@@ -1,4 +1,4 @@
-import { interpolateLab, rgb } from 'd3';
+import { color, interpolateLab, rgb } from 'd3';
 
 export type MarkLook = 'dip' | 'artefact' | 'flare' | 'exclude';
 
@@ -31,15 +31,16 @@ export interface PlotTheme {
 }
 
 const DENSITY_LEVELS = 24;
+const FAINTEST = 0.44;
 
 export function readTheme(element: Element): PlotTheme {
   const style = getComputedStyle(element);
   return themeFrom((token) => style.getPropertyValue(token).trim());
 }
 
-/** @param token gives the text of a CSS custom property, '' where it is not set */
+/** @param token gives the text of a CSS custom property; what is no colour becomes grey, never the colour drawn last */
 export function themeFrom(token: (name: string) => string): PlotTheme {
-  const colour = (name: string) => token(`--${name}`) || 'gray';
+  const colour = (name: string) => colourOr(token(`--${name}`), 'gray');
   return {
     plot: colour('plot'),
     ground: colour('ground'),
@@ -81,13 +82,19 @@ export function packColour(colour: string): number {
   return ((255 << 24) | (Math.round(b) << 16) | (Math.round(g) << 8) | Math.round(r)) >>> 0;
 }
 
-/** Lab steps along the stops. The first quarter is left out: one point alone must be told from the plot surface. */
+/** Lab steps along the stops, from the first that still tells one point from the plot surface, about 3:1. */
 function densityRamp(stops: readonly string[]): Uint32Array {
   const ramp = new Uint32Array(DENSITY_LEVELS);
   for (let level = 0; level < DENSITY_LEVELS; level += 1) {
-    const place = (0.28 + (0.72 * level) / (DENSITY_LEVELS - 1)) * (stops.length - 1);
+    const place = (FAINTEST + ((1 - FAINTEST) * level) / (DENSITY_LEVELS - 1)) * (stops.length - 1);
     const stop = Math.max(0, Math.min(Math.floor(place), stops.length - 2));
-    ramp[level] = packColour(interpolateLab(stops[stop] || 'gray', stops[stop + 1] || 'gray')(place - stop));
+    ramp[level] = packColour(
+      interpolateLab(colourOr(stops[stop], 'gray'), colourOr(stops[stop + 1], 'gray'))(place - stop),
+    );
   }
   return ramp;
+}
+
+function colourOr(text: string | undefined, otherwise: string): string {
+  return text !== undefined && color(text) ? text : otherwise;
 }

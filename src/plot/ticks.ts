@@ -12,11 +12,15 @@ export interface Ticks {
 /** Ticks at 1, 2 or 5 times a power of ten, at most `greatestCount` of them where the span allows. */
 export function linearTicks(domain: Span, greatestCount: number): Ticks {
   const step = stepFor(domain, greatestCount);
+  return steppedTicks(domain, step, minorParts(step));
+}
+
+/** Ticks at the multiples of a step, each interval in so many parts. */
+export function steppedTicks(domain: Span, step: number, parts: number): Ticks {
   const first = Math.ceil(domain[0] / step - 1e-9);
   const last = Math.floor(domain[1] / step + 1e-9);
   const major: number[] = [];
   for (let i = first; i <= last; i += 1) major.push(multiple(i, step));
-  const parts = minorParts(step);
   const minor: number[] = [];
   for (let i = (first - 1) * parts; i <= (last + 1) * parts; i += 1) {
     const value = multiple(i, step / parts);
@@ -26,7 +30,7 @@ export function linearTicks(domain: Span, greatestCount: number): Ticks {
   for (let i = first - 1; i <= last; i += 1) {
     segments.push({ from: multiple(i, step), to: multiple(i + 1, step), filled: Math.abs(i) % 2 === 0 });
   }
-  return { major, minor, segments, decimals: Math.max(0, Math.ceil(-Math.log10(step) - 1e-9)) };
+  return { major, minor, segments, decimals: decimalsOf(step) };
 }
 
 /** Ticks of a logarithmic axis at 1, 2 and 5, minor ones at every digit; linear ones where under two would show. */
@@ -73,4 +77,10 @@ function multiple(i: number, step: number): number {
 function minorParts(step: number): number {
   const digit = Math.round(step / 10 ** Math.floor(Math.log10(step) + 1e-9));
   return digit === 2 ? 4 : 5;
+}
+
+/** Fewest decimals that print a step exactly: 2 for 0.25. */
+function decimalsOf(step: number): number {
+  const least = Math.max(0, Math.ceil(-Math.log10(step) - 1e-9));
+  return Number(step.toFixed(least)) === Number(step.toPrecision(6)) ? least : least + 1;
 }
