@@ -18,7 +18,7 @@ export function linearScale(domain: Span, range: readonly [number, number]): Sca
 /** The domain must be over zero; what is not becomes 0.1 to 10. */
 export function logScale(domain: Span, range: readonly [number, number]): Scale {
   const [first, last] = domain;
-  const safe: Span = first > 0 && last > first && Number.isFinite(last) ? domain : [0.1, 10];
+  const safe: Span = first > 0 && last / first > 1 + 1e-12 && Number.isFinite(last / first) ? domain : [0.1, 10];
   return { kind: 'log', domain: safe, range, slope: (range[1] - range[0]) / Math.log(safe[1] / safe[0]) };
 }
 
