@@ -26,16 +26,24 @@ export function drawDurationCaliper(
   }
   const y = CALIPER_Y_PX + 0.5;
   drawLine(context, Math.max(left, frame.left), y, Math.min(right, frame.right), y, { colour });
-  drawCaliperLabel(context, theme, label, left, right);
+  drawCaliperLabel(context, frame, theme, label, left, right);
 }
 
-function drawCaliperLabel(context: DrawContext, theme: PlotTheme, label: string, left: number, right: number): void {
+function drawCaliperLabel(
+  context: DrawContext,
+  frame: Frame,
+  theme: PlotTheme,
+  label: string,
+  left: number,
+  right: number,
+): void {
   const look = { colour: theme.ink, font: uiFont(theme, 12, 500) };
   context.font = look.font;
   const width = context.measureText(label).width;
-  const middle = (left + right) / 2;
+  const middle = (Math.max(left, frame.left) + Math.min(right, frame.right)) / 2;
   if (right - left < width + 24) {
-    drawHaloText(context, theme, label, right + 8, CALIPER_Y_PX, look);
+    const beside = right + 8 + width < frame.right ? right + 8 : left - 8 - width;
+    drawHaloText(context, theme, label, Math.max(beside, frame.left + 4), CALIPER_Y_PX, look);
     return;
   }
   context.fillStyle = theme.plot;

@@ -62,11 +62,13 @@ export function countPoints(
   const lastRow = height - 1;
   const hide = outside === 'hide';
   for (let i = from; i < to; i += 1) {
-    const column = Math.floor((x[i]! - x0) * xSlope);
+    const along = (x[i]! - x0) * xSlope;
     const depth = (y[i]! - yTop) * ySlope;
-    if (!(column >= 0 && column < width) || Number.isNaN(depth)) continue;
+    if (!(along >= 0 && along < width) || Number.isNaN(depth)) continue;
     if (hide && (depth < 0 || depth > height)) continue;
-    const row = depth <= 0 ? 0 : depth >= lastRow ? lastRow : Math.floor(depth);
+    // Both are positive here, where cutting the fraction off is the floor and keeps the loop in integers.
+    const column = along | 0;
+    const row = depth <= 0 ? 0 : depth >= lastRow ? lastRow : depth | 0;
     counts[row * width + column]! += 1;
     if (row > lowestRow[column]!) lowestRow[column] = row;
     if (highestRow[column]! < 0 || row < highestRow[column]!) highestRow[column] = row;

@@ -4,6 +4,8 @@ const BINS = 2048;
 /** Fewer points than this under everything else cannot squeeze the plot: they are drawn on its lower edge. */
 const STRAY_LOW = 3;
 const STRAY_HIGH_FRACTION = 0.0005;
+/** While nothing lies further out than this there are no strays to look for. */
+const NEAR_SIGMAS = 6;
 
 /**
  * The y span that shows a series for judging dips: everything downwards but a few strays, upwards all but the
@@ -12,19 +14,33 @@ const STRAY_HIGH_FRACTION = 0.0005;
  * @param values length n; only `from` (included) to `to` (not) are looked at
  */
 export function displayExtent(values: Float64Array, from: number, to: number): Span {
+  const { low, high, count, mean, sigma } = roughLook(values, from, to);
+  if (count === 0) return [-1, 1];
+  const unsuspected = count < 200 || (high - mean < NEAR_SIGMAS * sigma && mean - low < NEAR_SIGMAS * sigma);
+  const core = unsuspected ? { low, high } : trimmed(values, from, to, low, high, count);
+  const margin = (core.high - core.low) * 0.06;
+  return wideSpan(core.low - margin, core.high + margin);
+}
+
+/** One pass; sums are taken from the first value so that a large mean costs no digits. */
+function roughLook(values: Float64Array, from: number, to: number) {
   let low = Number.POSITIVE_INFINITY;
   let high = Number.NEGATIVE_INFINITY;
   let count = 0;
+  let sum = 0;
+  let squares = 0;
+  const origin = values[from] || 0;
   for (let i = from; i < to; i += 1) {
     const value = values[i]!;
+    if (Number.isNaN(value)) continue;
     if (value < low) low = value;
     if (value > high) high = value;
-    if (!Number.isNaN(value)) count += 1;
+    count += 1;
+    sum += value - origin;
+    squares += (value - origin) * (value - origin);
   }
-  if (count === 0) return [-1, 1];
-  const core = count < 200 || high === low ? { low, high } : trimmed(values, from, to, low, high, count);
-  const margin = (core.high - core.low) * 0.06;
-  return wideSpan(core.low - margin, core.high + margin);
+  const shift = sum / count;
+  return { low, high, count, mean: origin + shift, sigma: Math.sqrt(Math.max(0, squares / count - shift * shift)) };
 }
 
 /** Cuts strays by a histogram that is refined once, so that one far point cannot hide the rest in one bin. */

@@ -31,7 +31,7 @@ export interface PlotTheme {
 }
 
 const DENSITY_LEVELS = 24;
-const FAINTEST = 0.44;
+const FAINTEST = 0.48;
 
 export function readTheme(element: Element): PlotTheme {
   const style = getComputedStyle(element);
