@@ -1,20 +1,12 @@
-import { LANE_PX, type LaneEvent, laneY } from '../events-layer.ts';
 import { type Frame, insidePlot } from '../frame.ts';
-import { markBand, type PlotMark } from '../marks-layer.ts';
-import { toPx, toValue } from '../scale.ts';
+import type { PlotMark } from '../marks-layer.ts';
+import { toValue } from '../scale.ts';
 import type { Span } from '../span.ts';
 import type { StripScene } from '../strip-scene.ts';
-import { nearestIndex, visibleRange } from '../visible-range.ts';
+import { nearestIndex } from '../visible-range.ts';
 import { clampSpan, panSpan, zoomSpan } from '../zoom.ts';
-import {
-  DRAG_PX,
-  GRIP_PX,
-  type KeyInput,
-  type PlotInput,
-  type PointerInput,
-  type Step,
-  unhandled,
-} from './plot-input.ts';
+import { DRAG_PX, type KeyInput, type PlotInput, type PointerInput, type Step, unhandled } from './plot-input.ts';
+import { hitAt, type MarkGrip, pointNear, type StripHit } from './strip-hit.ts';
 
 export type DragPhase = 'preview' | 'commit' | 'cancel';
 
@@ -32,16 +24,8 @@ export type StripIntent =
     }
   | { readonly kind: 'event click'; readonly caseNumber: number | undefined; readonly cycle: number };
 
-type Hit =
-  | { readonly kind: 'grip'; readonly mark: PlotMark; readonly grip: MarkGrip }
-  | { readonly kind: 'event'; readonly caseNumber: number | undefined; readonly event: LaneEvent }
-  | { readonly kind: 'mark'; readonly mark: PlotMark }
-  | undefined;
-
-type MarkGrip = 'start' | 'end' | 'body';
-
 type StripDrag =
-  | { readonly kind: 'press'; readonly xPx: number; readonly yPx: number; readonly hit: Hit; readonly view: Span }
+  | { readonly kind: 'press'; readonly xPx: number; readonly yPx: number; readonly hit: StripHit; readonly view: Span }
   | { readonly kind: 'pan'; readonly xPx: number; readonly view: Span }
   | { readonly kind: 'brush'; readonly from: number; readonly to: number; readonly byKey: boolean }
   | {
@@ -132,7 +116,7 @@ function pressed(gesture: StripGesture, input: PointerInput, frame: Frame, scene
   return { gesture: { ...gesture, drag }, intents: [], handled: true };
 }
 
-function dragOf(hit: Extract<Hit, { kind: 'grip' }>, fromPx: number): StripDrag {
+function dragOf(hit: Extract<StripHit, { kind: 'grip' }>, fromPx: number): StripDrag {
   return { kind: 'mark', mark: hit.mark, grip: hit.grip, fromPx, start: hit.mark.start, end: hit.mark.end };
 }
 
@@ -211,7 +195,7 @@ function released(gesture: StripGesture, input: PointerInput, frame: Frame): Str
   return { gesture: rest, intents, handled: true };
 }
 
-function clickIntents(hit: Hit): StripIntent[] {
+function clickIntents(hit: StripHit): StripIntent[] {
   if (hit?.kind === 'event') return [{ kind: 'event click', caseNumber: hit.caseNumber, cycle: hit.event.cycle }];
   return hit ? [{ kind: 'mark click', id: hit.mark.id }] : [];
 }
@@ -253,61 +237,6 @@ function hover(gesture: StripGesture, input: PointerInput, frame: Frame, scene: 
 
 function withCursor(gesture: StripGesture, cursor: NonNullable<StripGesture['cursor']>): StripStep {
   return { gesture: { ...gesture, cursor }, intents: [{ kind: 'cursor', ...cursor }], handled: true };
-}
-
-const REACH_PX = 4;
-
-/** The measured point nearest to the pointer within a few columns, else the bare time under it. */
-function pointNear(
-  frame: Frame,
-  scene: StripScene,
-  xPx: number,
-  yPx: number,
-): { time: number; value: number | undefined } {
-  const { time, values } = scene.series;
-  const { from, to } = visibleRange(time, [toValue(frame.x, xPx - REACH_PX), toValue(frame.x, xPx + REACH_PX)]);
-  let best: number | undefined;
-  let bestDistance = Number.POSITIVE_INFINITY;
-  for (let i = from; i < to; i += 1) {
-    const distance = Math.hypot(toPx(frame.x, time[i]!) - xPx, toPx(frame.y, values[i]!) - yPx);
-    if (distance < bestDistance) [best, bestDistance] = [i, distance];
-  }
-  return best === undefined
-    ? { time: toValue(frame.x, xPx), value: undefined }
-    : { time: time[best]!, value: values[best]! };
-}
-
-/** Grips of the selected mark before events, events before marks. */
-function hitAt(frame: Frame, scene: StripScene, xPx: number, yPx: number): Hit {
-  const inside = insidePlot(frame, xPx, yPx);
-  const near = (mark: PlotMark, reach: number) =>
-    xPx >= markBand(frame, mark).left - reach && xPx <= markBand(frame, mark).right + reach;
-  const selected = scene.marks.find((mark) => mark.selected && inside && near(mark, GRIP_PX));
-  if (selected) return { kind: 'grip', mark: selected, grip: gripAt(frame, selected, xPx) };
-  const event = eventAt(frame, scene, xPx, yPx);
-  if (event) return event;
-  const mark = inside ? scene.marks.find((other) => near(other, 2)) : undefined;
-  return mark && { kind: 'mark', mark };
-}
-
-function gripAt(frame: Frame, mark: PlotMark, xPx: number): MarkGrip {
-  const { left, right } = markBand(frame, mark);
-  // A narrow band keeps a middle to be moved by: its sides are grasped from outside.
-  const inner = Math.min(GRIP_PX, (right - left) / 3);
-  if (xPx <= left + inner) return 'start';
-  return xPx >= right - inner ? 'end' : 'body';
-}
-
-function eventAt(frame: Frame, scene: StripScene, xPx: number, yPx: number): Hit {
-  const index = scene.lanes.findIndex((_, i) => Math.abs(laneY(i) - yPx) <= LANE_PX / 2);
-  const lane = scene.lanes[index];
-  if (!lane || xPx < frame.left - 4) return undefined;
-  const distance = (event: LaneEvent) => Math.abs(toPx(frame.x, event.timeDays) - xPx);
-  const event = lane.events.reduce<LaneEvent | undefined>(
-    (best, other) => (best && distance(best) <= distance(other) ? best : other),
-    undefined,
-  );
-  return event && distance(event) <= 8 ? { kind: 'event', caseNumber: lane.caseNumber, event } : undefined;
 }
 
 function stepKey(gesture: StripGesture, input: KeyInput, frame: Frame, scene: StripScene): StripStep {
