@@ -1,7 +1,7 @@
 import type { DrawContext } from './draw-context.ts';
 import type { PlotTheme } from './theme.ts';
 
-export type CaseShape = 'circle' | 'square' | 'triangle up' | 'diamond' | 'triangle down' | 'hexagon' | 'plus' | 'star';
+type CaseShape = 'circle' | 'square' | 'triangle up' | 'diamond' | 'triangle down' | 'hexagon' | 'plus' | 'star';
 
 /** What tells a case apart without its colour: its shape, the dash of its model line, hollow from the ninth on. */
 export interface CaseLook {
@@ -46,7 +46,7 @@ export function caseLook(caseNumber: number | undefined, theme: PlotTheme): Case
 }
 
 /** Traces the outline of a shape of about `radiusPx`; the caller fills and strokes it. */
-export function traceShape(context: DrawContext, shape: CaseShape, x: number, y: number, radiusPx: number): void {
+function traceShape(context: DrawContext, shape: CaseShape, x: number, y: number, radiusPx: number): void {
   context.beginPath();
   switch (shape) {
     case 'circle':

@@ -1,6 +1,7 @@
 import { drawCursor } from './cursor-layer.ts';
 import { makeDensityGrid } from './density-grid.ts';
-import { drawFold, type FoldScene, type FoldScratch, foldFrame } from './fold-scene.ts';
+import { drawFold, type FoldScratch, foldFrame } from './draw-fold.ts';
+import type { FoldScene } from './fold-scene.ts';
 import { makeFoldWork } from './fold-work.ts';
 import type { Frame } from './frame.ts';
 import {

@@ -71,7 +71,7 @@ function drawGrips(context: DrawContext, band: Band, theme: PlotTheme): void {
 }
 
 /** Dip none, artefact diagonal, exclude crossed, flare dots: the kind is told without its colour. */
-export function drawHatch(context: DrawContext, band: Band, kind: MarkLook, colour: string): void {
+function drawHatch(context: DrawContext, band: Band, kind: MarkLook, colour: string): void {
   if (kind === 'dip') return;
   context.strokeStyle = colour;
   context.fillStyle = colour;

@@ -22,7 +22,7 @@ export interface PointCloud {
   readonly outside: 'edge' | 'hide';
 }
 
-export function isDense(cloud: PointCloud, frame: Frame): boolean {
+function isDense(cloud: PointCloud, frame: Frame): boolean {
   return cloud.inside > DENSE_PER_PX * (frame.right - frame.left);
 }
 

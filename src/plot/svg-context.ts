@@ -241,6 +241,6 @@ function short(value: number): string {
   return String(Math.round(value * 100) / 100);
 }
 
-export function escapeXml(text: string): string {
+function escapeXml(text: string): string {
   return text.replace(/&/g, '&amp;').replace(/</g, '&lt;').replace(/>/g, '&gt;').replace(/"/g, '&quot;');
 }
