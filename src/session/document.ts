@@ -39,6 +39,8 @@ export interface Target {
   readonly search: Partial<BoxSearchSettings>;
   readonly marks: readonly Mark[];
   readonly cases: readonly Case[];
+  /** Highest case number ever given here: numbers are not reused after a case is deleted. */
+  readonly lastCaseNumber: number;
 }
 
 export type MarkKind = 'dip' | 'artefact' | 'flare' | 'exclude';

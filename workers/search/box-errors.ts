@@ -1,0 +1,56 @@
+import type { SearchSeries } from '../../src/contract/search-contract.ts';
+import { cycleOf, type Ephemeris } from '../../src/core/ephemeris.ts';
+import { findEdgeGaps } from './refine-box.ts';
+
+/** Ingress over duration where it is not known: a central crossing of a companion of a tenth of the star's radius. */
+const INGRESS_FRACTION = 0.1;
+/** Variance of the place of a step in Brownian motion with drift: Yao (1987), Ann. Stat. 15, 1321 (from memory). */
+const STEP_PLACE_VARIANCE = 26;
+
+export interface TimingErrors {
+  /** Mid-event time at the mean cycle of the points in events, where it is uncorrelated with the period. */
+  readonly epochDays: number;
+  readonly epochErrorDays: number;
+  readonly periodErrorDays: number;
+}
+
+/**
+ * Errors of a box's timing from white noise, Q being its S/N and T its duration. The epoch's variance is the sum of
+ * - T^2 / Q^2 * theta / 2, theta = 0.1: a sloped ingress, Carter et al. (2008), ApJ 689, 499, eq. 21 (sigma of t_c);
+ * - 26/2 T^2 / Q^4: where noise lets two sharp edges slide (Yao 1987), which rules at low Q;
+ * - the variance of edges that may lie anywhere between the points that they part.
+ * The period's error is the epoch's over the standard deviation of the cycle numbers of the points in events, as in a
+ * least-squares line. A box of one event leaves the period unknown: the error is then the period itself.
+ * The combination is our own; `test/search/peak-errors.test.ts` holds it against simulated scatter.
+ */
+export function estimateTimingErrors(series: SearchSeries, ephemeris: Ephemeris, signalToNoise: number): TimingErrors {
+  const { periodDays, epochDays, durationDays } = ephemeris;
+  const { leading, trailing } = findEdgeGaps(series, ephemeris);
+  const sampling = ((leading[1] - leading[0]) ** 2 + (trailing[1] - trailing[0]) ** 2) / 48;
+  const ingress = (durationDays / signalToNoise) ** 2 * (INGRESS_FRACTION / 2);
+  const sliding = (STEP_PLACE_VARIANCE / 2) * (durationDays / signalToNoise ** 2) ** 2;
+  const epochErrorDays = Math.sqrt(ingress + sliding + sampling);
+  const cycles = describeCycles(series.time, ephemeris);
+  return {
+    epochDays: epochDays + Math.round(cycles.mean) * periodDays,
+    epochErrorDays,
+    periodErrorDays: cycles.deviation > 0 ? Math.min(periodDays, epochErrorDays / cycles.deviation) : periodDays,
+  };
+}
+
+/** Mean and population standard deviation of the cycle numbers of the points inside events. */
+function describeCycles(time: Float64Array, ephemeris: Ephemeris): { mean: number; deviation: number } {
+  const { periodDays, epochDays, durationDays } = ephemeris;
+  let n = 0;
+  let mean = 0;
+  let squares = 0;
+  for (let i = 0; i < time.length; i += 1) {
+    const cycle = cycleOf(time[i]!, periodDays, epochDays);
+    if (Math.abs(time[i]! - epochDays - cycle * periodDays) > durationDays / 2) continue;
+    n += 1;
+    const delta = cycle - mean;
+    mean += delta / n;
+    squares += delta * (cycle - mean);
+  }
+  return n === 0 ? { mean: 0, deviation: 0 } : { mean, deviation: Math.sqrt(squares / n) };
+}
