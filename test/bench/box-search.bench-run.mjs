@@ -71,10 +71,18 @@ async function report(name, spanDays, cadenceDays, rounds = ROUNDS) {
   const { value: part } = await search();
   const plan = planBoxSearch(series, settings).value;
   const own = await time(search, rounds);
-  const peaks = await time(() => summariseBoxSearch(series, { key: '', settings, parts: [part] }, checkpoint()), rounds);
+  const peaks = await time(
+    () => summariseBoxSearch(series, { key: '', settings, parts: [part] }, checkpoint()),
+    rounds,
+  );
   const theirs = timeAstropy(series, plan, rounds);
-  const ratio = theirs === undefined ? 'astropy is not here' : `astropy ${theirs.toFixed(0)} ms, ratio ${(theirs / own).toFixed(2)}`;
-  console.log(`${name}: ${series.time.length} points, ${plan.periods.length} trials, ${plan.durations.length} durations`);
+  const ratio =
+    theirs === undefined
+      ? 'astropy is not here'
+      : `astropy ${theirs.toFixed(0)} ms, ratio ${(theirs / own).toFixed(2)}`;
+  console.log(
+    `${name}: ${series.time.length} points, ${plan.periods.length} trials, ${plan.durations.length} durations`,
+  );
   console.log(`  search ${own.toFixed(0)} ms (${ratio}), peaks ${peaks.toFixed(0)} ms`);
   await reportPreparation(series);
 }

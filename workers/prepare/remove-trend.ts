@@ -1,0 +1,62 @@
+import type { Clip, Detrend } from '../../src/core/recipe.ts';
+import type { Checkpoint } from '../checkpoint.ts';
+import { fitBiweightTrend } from './biweight-trend.ts';
+import { clipBySigma } from './sigma-clip.ts';
+
+export interface TrendJob {
+  /** Days, ascending, length n. */
+  readonly time: Float64Array;
+  /** Relative, length n. */
+  readonly raw: Float64Array;
+  readonly detrend: Detrend;
+  readonly clip: Clip;
+  /** 1 where a point carries no weight in the trend and is never clipped. */
+  readonly isProtected: Uint8Array;
+  /** Whether the trend is subtracted instead of divided by. */
+  readonly isSubtracted: boolean;
+}
+
+export interface Trended {
+  /** Length n, also at clipped points. */
+  readonly trend: Float64Array;
+  readonly flux: Float64Array;
+  /** 1 where a point survived the clip. */
+  readonly kept: Uint8Array;
+}
+
+/**
+ * Detrends, clips outliers of the detrended flux, and does both again without them, so that outliers shape neither
+ * the trend nor the clip.
+ *
+ * @returns a sentence when the trend cannot be divided by, undefined when cancelled
+ */
+export async function removeTrend(job: TrendJob, checkpoint: Checkpoint): Promise<Trended | string | undefined> {
+  const { time, raw, clip, isProtected } = job;
+  const kept = new Uint8Array(raw.length).fill(1);
+  let trend: Float64Array | undefined;
+  let flux = raw;
+  for (let pass = 0; pass < 2; pass += 1) {
+    trend = await fitTrend(job, kept, checkpoint);
+    if (trend === undefined) return undefined;
+    const low = trend.findIndex((value) => !job.isSubtracted && !(value > 0));
+    if (low >= 0)
+      return `The trend falls to ${Number(trend[low]!.toPrecision(3))} of the median flux at time ${time[low]}, and flux cannot be divided by it: exclude that span, widen the window or prepare without detrending.`;
+    flux = applyTrend(raw, trend, job.isSubtracted);
+    if (clip.kind === 'none' || clipBySigma(flux, kept, isProtected, clip.side, clip.sigma) === 0) break;
+  }
+  return { trend: trend ?? new Float64Array(raw.length).fill(1), flux, kept };
+}
+
+async function fitTrend(
+  { time, raw, detrend, isProtected }: TrendJob,
+  kept: Uint8Array,
+  checkpoint: Checkpoint,
+): Promise<Float64Array | undefined> {
+  if (detrend.kind === 'none') return new Float64Array(raw.length).fill(1);
+  const hasWeight = kept.map((keep, i) => (keep === 1 && isProtected[i] === 0 ? 1 : 0));
+  return fitBiweightTrend({ time, flux: raw, hasWeight, windowDays: detrend.windowDays }, checkpoint);
+}
+
+function applyTrend(raw: Float64Array, trend: Float64Array, isSubtracted: boolean): Float64Array {
+  return raw.map((value, i) => (isSubtracted ? 1 + value - trend[i]! : value / trend[i]!));
+}
