@@ -73,3 +73,33 @@ export interface RulingFields {
   readonly confidence: Confidence;
   readonly note: string;
 }
+
+export type TargetCommand = Extract<Command, { targetId: string }>;
+export type CaseCommand = Extract<Command, { kind: 'time case' | 'delete case' | 'rule' | 'park' | 'unpark' }>;
+export type MarkCommand = Extract<Command, { kind: 'edit mark' | 'delete mark' }>;
+
+export function needsTarget(command: Command): command is TargetCommand {
+  return 'targetId' in command;
+}
+
+/** Of a case that must exist already. */
+export function needsCase(command: Command): command is CaseCommand {
+  return ['time case', 'delete case', 'rule', 'park', 'unpark'].includes(command.kind);
+}
+
+/** Of a mark that must exist already. */
+export function needsMark(command: Command): command is MarkCommand {
+  return command.kind === 'edit mark' || command.kind === 'delete mark';
+}
+
+/** What a command is about, as a journal entry keeps it. */
+export function subjectOf(command: Command): { targetId: string | undefined; caseId: string | undefined } {
+  return {
+    targetId: 'targetId' in command ? command.targetId : undefined,
+    caseId: 'caseId' in command ? command.caseId : undefined,
+  };
+}
+
+export function authorOf({ at, analyst, app }: CommandStamp): { at: string; analyst: string; app: string } {
+  return { at, analyst, app };
+}

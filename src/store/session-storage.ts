@@ -1,0 +1,72 @@
+import { type DBSchema, type IDBPDatabase, openDB } from 'idb';
+import type { SessionDocument } from '../session/document.ts';
+import type { TargetSummary } from './results-store.ts';
+import type { RememberedView } from './view-store.ts';
+
+/** What a session needs to come back after a reload, with its files. */
+export interface SavedSession {
+  readonly document: SessionDocument;
+  readonly savedAt: string;
+}
+
+interface CandlingDatabase extends DBSchema {
+  sessions: { key: string; value: SavedSession };
+  /** Bytes of every light-curve file, by SHA-256: sessions share them. */
+  files: { key: string; value: { readonly name: string; readonly bytes: ArrayBuffer } };
+  views: { key: string; value: RememberedView };
+  summaries: { key: string; value: ReadonlyMap<string, TargetSummary> };
+}
+
+export interface SessionStorage {
+  lastSession(): Promise<SavedSession | undefined>;
+  saveSession(session: SavedSession): Promise<void>;
+  saveFile(sha256: string, name: string, bytes: ArrayBuffer): Promise<void>;
+  readFile(sha256: string): Promise<ArrayBuffer | undefined>;
+  saveView(sessionId: string, view: RememberedView): Promise<void>;
+  readView(sessionId: string): Promise<RememberedView | undefined>;
+  saveSummaries(sessionId: string, summaries: ReadonlyMap<string, TargetSummary>): Promise<void>;
+  readSummaries(sessionId: string): Promise<ReadonlyMap<string, TargetSummary>>;
+}
+
+/** The browser's own database: it stays on this machine. */
+export function createSessionStorage(name = 'candling'): SessionStorage {
+  const opened = openDatabase(name);
+  return {
+    async lastSession() {
+      const sessions = await (await opened).getAll('sessions');
+      return sessions.reduce<SavedSession | undefined>(
+        (latest, session) => (latest === undefined || session.savedAt > latest.savedAt ? session : latest),
+        undefined,
+      );
+    },
+    async saveSession(session) {
+      await (await opened).put('sessions', session, session.document.id);
+    },
+    async saveFile(sha256, fileName, bytes) {
+      await (await opened).put('files', { name: fileName, bytes }, sha256);
+    },
+    async readFile(sha256) {
+      return (await (await opened).get('files', sha256))?.bytes;
+    },
+    async saveView(sessionId, view) {
+      await (await opened).put('views', view, sessionId);
+    },
+    async readView(sessionId) {
+      return (await opened).get('views', sessionId);
+    },
+    async saveSummaries(sessionId, summaries) {
+      await (await opened).put('summaries', summaries, sessionId);
+    },
+    async readSummaries(sessionId) {
+      return (await (await opened).get('summaries', sessionId)) ?? new Map();
+    },
+  };
+}
+
+function openDatabase(name: string): Promise<IDBPDatabase<CandlingDatabase>> {
+  return openDB<CandlingDatabase>(name, 1, {
+    upgrade(database) {
+      for (const store of ['sessions', 'files', 'views', 'summaries'] as const) database.createObjectStore(store);
+    },
+  });
+}
