@@ -6,7 +6,7 @@ const CUT = 5;
 /** A window with fewer points has no location of its own. */
 const LEAST_POINTS = 3;
 /** Nodes in one window where the trend is not computed at every point. */
-const NODES_PER_WINDOW = 64;
+const NODES_PER_WINDOW = 32;
 /** Up to this many window members in all, every point gets its own window. */
 const MOST_MEMBERS = 4_000_000;
 
@@ -24,7 +24,7 @@ export interface TrendInput {
 /**
  * Slow trend by a sliding Tukey biweight location (iterated, c = 5) in windows of time. Windows are cut off at the
  * ends of a piece, and pieces end at gaps longer than half a window. Where a window has fewer than three points with
- * weight, the trend is interpolated in time from its neighbours. Long series are computed at 64 nodes a window and
+ * weight, the trend is interpolated in time from its neighbours. Long series are computed at 32 nodes a window and
  * interpolated linearly between them.
  * Source: Hippke et al. (2019), AJ 158, 143, who compare such filters and prefer this one.
  *

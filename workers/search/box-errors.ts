@@ -1,6 +1,6 @@
 import type { SearchSeries } from '../../src/contract/search-contract.ts';
 import { cycleOf, type Ephemeris } from '../../src/core/ephemeris.ts';
-import { findEdgeGaps } from './refine-box.ts';
+import { findEdgeGaps, findPeriodGap } from './box-gaps.ts';
 
 /** Ingress over duration where it is not known: a central crossing of a companion of a tenth of the star's radius. */
 const INGRESS_FRACTION = 0.1;
@@ -20,7 +20,7 @@ export interface TimingErrors {
  * - 26/2 T^2 / Q^4: where noise lets two sharp edges slide (Yao 1987), which rules at low Q;
  * - the variance of edges that may lie anywhere between the points that they part.
  * The period's error is the epoch's over the standard deviation of the cycle numbers of the points in events, as in a
- * least-squares line. A box of one event leaves the period unknown: the error is then the period itself.
+ * least-squares line, and again what the sampling leaves open. A box of one event leaves the period unknown: the error is then the period itself.
  * The combination is our own; `test/search/peak-errors.test.ts` holds it against simulated scatter.
  */
 export function estimateTimingErrors(series: SearchSeries, ephemeris: Ephemeris, signalToNoise: number): TimingErrors {
@@ -31,10 +31,12 @@ export function estimateTimingErrors(series: SearchSeries, ephemeris: Ephemeris,
   const sliding = (STEP_PLACE_VARIANCE / 2) * (durationDays / signalToNoise ** 2) ** 2;
   const epochErrorDays = Math.sqrt(ingress + sliding + sampling);
   const cycles = describeCycles(series.time, ephemeris);
+  const [down, up] = findPeriodGap(series, ephemeris);
+  const periodError = Math.hypot(epochErrorDays / cycles.deviation, (up - down) / Math.sqrt(12));
   return {
     epochDays: epochDays + Math.round(cycles.mean) * periodDays,
     epochErrorDays,
-    periodErrorDays: cycles.deviation > 0 ? Math.min(periodDays, epochErrorDays / cycles.deviation) : periodDays,
+    periodErrorDays: cycles.deviation > 0 ? Math.min(periodDays, periodError) : periodDays,
   };
 }
 

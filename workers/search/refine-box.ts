@@ -1,13 +1,21 @@
 import type { SearchSeries } from '../../src/contract/search-contract.ts';
-import { cycleOf, type Ephemeris } from '../../src/core/ephemeris.ts';
+import type { Ephemeris } from '../../src/core/ephemeris.ts';
 import { measureBox } from '../../src/core/measure-box.ts';
 import { LARGEST_DUTY_CYCLE } from './box-durations.ts';
+import { findEdgeGaps, findPeriodGap } from './box-gaps.ts';
 import { type BoxWork, makeTrialBox, searchTrial } from './box-search.ts';
 
-const FINE_BINS_PER_BOX = 30;
-const FINE_DURATIONS = [0.7, 0.8, 0.9, 1, 1.1, 1.25, 1.4];
-/** Fine trial periods let an event drift by this part of its duration over the span. */
-const FINE_DRIFT = 1 / 16;
+/** How a neighbourhood is scanned on phase bins. */
+interface Fineness {
+  readonly binsPerBox: number;
+  /** Of the duration so far. */
+  readonly durations: readonly number[];
+  /** Trial periods let an event drift by this part of its duration over the span. */
+  readonly drift: number;
+}
+
+const FINE: Fineness = { binsPerBox: 30, durations: [0.7, 0.8, 0.9, 1, 1.1, 1.25, 1.4], drift: 1 / 16 };
+const FINEST: Fineness = { binsPerBox: 100, durations: [0.9, 0.94, 0.97, 1, 1.03, 1.06, 1.1], drift: 1 / 64 };
 const MOST_FINE_PERIODS = 120;
 /** The polish starts with steps of this part of the duration and halves them this often. */
 const FIRST_STEP = 1 / 24;
@@ -21,29 +29,39 @@ export interface PeriodReach {
 }
 
 /**
- * Maximises the box S/N near a trial over period, epoch and duration: first on fine phase bins at periods between the
- * neighbouring trials, then on the unbinned series by a pattern search that moves the period, the box and each of
- * its edges. The epoch comes out in the middle of the span, and each edge midway between the points it parts.
+ * Maximises the box S/N near a trial over period, epoch and duration: first on ever finer phase bins at periods
+ * between the neighbouring trials, then on the unbinned series by a pattern search that moves the period, the box and
+ * each of its edges. The epoch comes out in the middle of the span, and each edge midway between the points it parts.
  */
 export function refineBox(series: SearchSeries, work: BoxWork, start: Ephemeris, reach: PeriodReach): Ephemeris {
-  const fine = scanFinely(work, start, reach, spanOf(series));
-  return settleEdges(series, polish(series, moveToMiddle(series, fine)));
+  const span = spanOf(series);
+  const fine = scanFinely(work, start, reach, span, FINE);
+  const step = (FINE.drift * fine.durationDays * fine.periodDays) / span;
+  const near = { from: fine.periodDays - step, to: fine.periodDays + step };
+  const finest = scanFinely(work, fine, near, span, FINEST);
+  return settle(series, polish(series, moveToMiddle(series, finest)));
 }
 
 const spanOf = ({ time }: SearchSeries): number => time.at(-1)! - time[0]!;
 
-function scanFinely(work: BoxWork, start: Ephemeris, { from, to }: PeriodReach, span: number): Ephemeris {
+function scanFinely(
+  work: BoxWork,
+  start: Ephemeris,
+  { from, to }: PeriodReach,
+  span: number,
+  { binsPerBox, durations: factors, drift }: Fineness,
+): Ephemeris {
   const most = start.periodDays * LARGEST_DUTY_CYCLE;
-  const durations = Float64Array.from(FINE_DURATIONS, (factor) => Math.min(most, factor * start.durationDays));
+  const durations = Float64Array.from(factors, (factor) => Math.min(most, factor * start.durationDays));
   const range = { first: 0, last: durations.length - 1 };
-  const step = (FINE_DRIFT * start.durationDays * start.periodDays) / span;
+  const step = (drift * start.durationDays * start.periodDays) / span;
   const count = Math.max(2, Math.min(MOST_FINE_PERIODS, Math.ceil((to - from) / step)));
   const box = makeTrialBox();
   let best = start;
   let bestSignal = 0;
   for (let i = 0; i <= count; i += 1) {
     const periodDays = from + ((to - from) * i) / count;
-    searchTrial(work, periodDays, durations, range, box, FINE_BINS_PER_BOX);
+    searchTrial(work, periodDays, durations, range, box, binsPerBox);
     if (box.signalToNoise <= bestSignal) continue;
     bestSignal = box.signalToNoise;
     best = { periodDays, epochDays: box.epochDays, durationDays: box.durationDays };
@@ -96,27 +114,12 @@ function neighboursOf({ periodDays, epochDays, durationDays }: Ephemeris, step: 
   ]);
 }
 
-/** Widths of the folded gaps, in days, in which the edges of a box may lie without gaining or losing a point. */
-export interface EdgeGaps {
-  /** Nearest folded points either side of the leading edge, days from mid-event. */
-  readonly leading: readonly [number, number];
-  readonly trailing: readonly [number, number];
-}
-
-export function findEdgeGaps({ time }: SearchSeries, { periodDays, epochDays, durationDays }: Ephemeris): EdgeGaps {
-  const half = durationDays / 2;
-  const leading: [number, number] = [-durationDays, half];
-  const trailing: [number, number] = [-half, durationDays];
-  for (let i = 0; i < time.length; i += 1) {
-    const x = time[i]! - epochDays - cycleOf(time[i]!, periodDays, epochDays) * periodDays;
-    if (x < -half) leading[0] = Math.max(leading[0], x);
-    else if (x > half) trailing[1] = Math.min(trailing[1], x);
-    else {
-      leading[1] = Math.min(leading[1], x);
-      trailing[0] = Math.max(trailing[0], x);
-    }
-  }
-  return { leading, trailing };
+/** Moves edges and period to the middle of where the box holds the same points. */
+function settle(series: SearchSeries, ephemeris: Ephemeris): Ephemeris {
+  const steady = settleEdges(series, ephemeris);
+  const [shorter, longer] = findPeriodGap(series, steady);
+  const centred = { ...steady, periodDays: steady.periodDays + (shorter + longer) / 2 };
+  return settleEdges(series, keepBetter(series, centred, steady));
 }
 
 function settleEdges(series: SearchSeries, ephemeris: Ephemeris): Ephemeris {
@@ -124,7 +127,14 @@ function settleEdges(series: SearchSeries, ephemeris: Ephemeris): Ephemeris {
   const start = (leading[0] + leading[1]) / 2;
   const end = (trailing[0] + trailing[1]) / 2;
   const durationDays = Math.min(end - start, ephemeris.periodDays * LARGEST_DUTY_CYCLE);
-  const settled = { ...ephemeris, epochDays: ephemeris.epochDays + (start + end) / 2, durationDays };
-  // A quarter of the period or a tie at an edge may have cut a point off: then the box stays as it was.
-  return signalOf(series, settled) >= signalOf(series, ephemeris) ? settled : ephemeris;
+  return keepBetter(
+    series,
+    { ...ephemeris, epochDays: ephemeris.epochDays + (start + end) / 2, durationDays },
+    ephemeris,
+  );
+}
+
+/** The new box, unless a quarter of the period or a tie at an edge has cut a point off. */
+function keepBetter(series: SearchSeries, next: Ephemeris, last: Ephemeris): Ephemeris {
+  return signalOf(series, next) >= signalOf(series, last) ? next : last;
 }
