@@ -1,6 +1,7 @@
 import type { SearchSeries } from '../../src/contract/search-contract.ts';
 import { median } from '../../src/core/robust-statistics.ts';
 import type { DurationRange } from './box-durations.ts';
+import { makePhaseSums, type PhaseSums, sumByPhase } from './phase-sums.ts';
 
 /** Phase bins in the shortest box of a trial. */
 export const BINS_PER_BOX = 10;
@@ -8,21 +9,6 @@ export const BINS_PER_BOX = 10;
 const LEAST_TYPICAL_POINTS = 2.5;
 /** Below this a dip is rounding error. */
 const LEAST_SIGNAL_TO_NOISE = 1e-6;
-
-/** A series made ready for many trials, with the sums that they share. */
-export interface BoxWork {
-  /** Days after `startDays`. */
-  readonly elapsed: Float64Array;
-  /** 1 / error^2. */
-  readonly weight: Float64Array;
-  /** weight * (flux - weighted mean). */
-  readonly weighted: Float64Array;
-  readonly startDays: number;
-  readonly totalWeight: number;
-  readonly leastWeight: number;
-  /** Sums of weight and of weighted flux before each phase bin, interleaved; grown when a trial needs more bins. */
-  sums: Float64Array;
-}
 
 /** The best box of one trial period. All zero where no box dips. */
 export interface TrialBox {
@@ -34,24 +20,23 @@ export interface TrialBox {
 
 export const makeTrialBox = (): TrialBox => ({ signalToNoise: 0, depth: 0, durationDays: 0, epochDays: 0 });
 
+/** A series made ready for many trials. */
+export interface BoxWork extends PhaseSums {
+  readonly startDays: number;
+  readonly totalWeight: number;
+  readonly leastWeight: number;
+}
+
 export function makeBoxWork({ time, flux, error }: SearchSeries, leastPoints: number = LEAST_TYPICAL_POINTS): BoxWork {
-  const startDays = time[0] ?? 0;
   const weight = error.map((sigma) => 1 / (sigma * sigma));
-  let totalWeight = 0;
-  let sum = 0;
-  for (let i = 0; i < flux.length; i += 1) {
-    totalWeight += weight[i]!;
-    sum += weight[i]! * (flux[i]! - 1);
-  }
-  const mean = sum / totalWeight;
+  const totalWeight = weight.reduce((sum, w) => sum + w, 0);
+  const mean = flux.reduce((sum, value, i) => sum + weight[i]! * (value - 1), 0) / totalWeight;
+  const weighted = flux.map((value, i) => weight[i]! * (value - 1 - mean));
   return {
-    elapsed: time.map((value) => value - startDays),
-    weight,
-    weighted: flux.map((value, i) => weight[i]! * (value - 1 - mean)),
-    startDays,
+    ...makePhaseSums(time, weight, weighted),
+    startDays: time[0] ?? 0,
     totalWeight,
     leastWeight: leastPoints * median(weight),
-    sums: new Float64Array(0),
   };
 }
 
@@ -80,9 +65,7 @@ export function searchTrial(
   const bins = Math.ceil((periodDays / durations[range.first]!) * binsPerBox);
   const perBin = bins / periodDays;
   const longest = Math.round(durations[range.last]! * perBin);
-  if (work.sums.length < 2 * (bins + longest + 2)) work.sums = new Float64Array(2 * (bins + longest + 2));
-  sumIntoBins(work, 1 / periodDays, bins);
-  accumulate(work.sums, bins, longest);
+  sumByPhase(work, periodDays, bins, longest);
   let bestScore = 0;
   let bestStart = 0;
   let bestWidth = 0;
@@ -97,37 +80,6 @@ export function searchTrial(
     bestWidth = width;
   }
   describeBest(work, periodDays, bins, bestStart, bestWidth, best);
-}
-
-function sumIntoBins({ elapsed, weight, weighted, sums }: BoxWork, frequency: number, bins: number): void {
-  sums.fill(0, 0, 2 * bins + 4);
-  const n = elapsed.length;
-  for (let i = 0; i < n; i += 1) {
-    const cycles = elapsed[i]! * frequency;
-    // Bins are stored one place late: place 0 stays empty for the running sums.
-    const place = ((((cycles - Math.floor(cycles)) * bins) | 0) + 1) << 1;
-    sums[place] = sums[place]! + weight[i]!;
-    sums[place + 1] = sums[place + 1]! + weighted[i]!;
-  }
-  // A phase that rounds up to 1 belongs to the first bin.
-  const over = 2 * (bins + 1);
-  sums[2] = sums[2]! + sums[over]!;
-  sums[3] = sums[3]! + sums[over + 1]!;
-}
-
-/** Turns bins into running sums, carried on past the period's end so that windows may wrap. */
-function accumulate(sums: Float64Array, bins: number, longest: number): void {
-  for (let place = 2; place <= 2 * bins; place += 2) {
-    sums[place] = sums[place]! + sums[place - 2]!;
-    sums[place + 1] = sums[place + 1]! + sums[place - 1]!;
-  }
-  const end = 2 * bins;
-  const weight = sums[end]!;
-  const weighted = sums[end + 1]!;
-  for (let place = 2; place <= 2 * longest; place += 2) {
-    sums[end + place] = weight + sums[place]!;
-    sums[end + place + 1] = weighted + sums[place + 1]!;
-  }
 }
 
 function scanWindows(
