@@ -1,7 +1,9 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
+import { DEFAULT_BOX_SEARCH } from '../../src/core/box-search-settings.ts';
 import { measureBox } from '../../src/core/measure-box.ts';
 import { makeBoxWork, makeTrialBox, searchTrial } from '../../workers/search/box-search.ts';
+import { planBoxSearch } from '../../workers/search/plan-box-search.ts';
 import { makeBoxSeries, searchBox } from './search-box.ts';
 
 const SAMPLING = { points: 1200, cadenceDays: 1 / 48, sigma: 0.001 };
@@ -81,6 +83,30 @@ describe('box search', () => {
     const gappy = { ...series, time: pick(series.time), flux: pick(series.flux), error: pick(series.error) };
     const { peaks } = await searchBox(gappy, SETTINGS);
     expect(Math.abs(peaks[0]!.periodDays - 3.3)).toBeLessThan(0.01);
+  });
+});
+
+describe('box search of awkward series', () => {
+  const time = fc.array(fc.double({ min: 0, max: 40, noNaN: true }), { minLength: 10, maxLength: 40 });
+
+  it('gives finite numbers or a sentence, whatever the times: few points, gaps, equal times', async () => {
+    await fc.assert(
+      fc.asyncProperty(time, fc.integer({ min: 0, max: 9 }), async (values, copies) => {
+        const sorted = Float64Array.from([...values, ...new Array<number>(copies).fill(values[0]!)]).sort();
+        const flux = sorted.map((at) => 1 + 0.01 * Math.sin(77 * at));
+        const series = { seriesId: '', time: sorted, flux, error: flux.map(() => 0.01) };
+        const settings = { ...DEFAULT_BOX_SEARCH, oversampling: 0.5 };
+        const planned = planBoxSearch(series, settings);
+        if (planned.kind === 'failed') {
+          expect(planned.error.sentence).toMatch(/\.$/);
+          return;
+        }
+        const { peaks, signalToNoise, epochDays } = await searchBox(series, settings);
+        expect([...signalToNoise, ...epochDays].every(Number.isFinite)).toBe(true);
+        for (const peak of peaks) expect(Object.values(peak).every(Number.isFinite)).toBe(true);
+      }),
+      { numRuns: 40, seed: 5 },
+    );
   });
 });
 

@@ -25,8 +25,8 @@ describe('sums by phase', () => {
     fc.assert(
       fc.property(seed, period, fc.boolean(), (from, periodDays, hasGap) => {
         const random = seedRandom(from);
-        const time = Float64Array.from({ length: points }, () => random.uniform() * 20).sort();
-        if (hasGap) time.forEach((at, i) => void (time[i] = at > 7 ? at + 31 : at));
+        const even = Float64Array.from({ length: points }, () => random.uniform() * 20).sort();
+        const time = hasGap ? even.map((at) => (at > 7 ? at + 31 : at)) : even;
         const weight = time.map(() => 0.5 + random.uniform());
         const weighted = time.map(() => random.normal());
         const work = makePhaseSums(time, weight, weighted);
@@ -34,10 +34,12 @@ describe('sums by phase', () => {
         sumByPhase(work, periodDays, bins, longest);
         [weight, weighted].forEach((values, offset) => {
           const expected = sumLiterally(time, values, periodDays, bins);
+          let worst = 0;
           for (let bin = 0; bin < bins + longest; bin += 1) {
             const sum = work.sums[2 * (bin + 1) + offset]! - work.sums[2 * bin + offset]!;
-            expect(Math.abs(sum - expected[bin % bins]!)).toBeLessThan(1e-8);
+            worst = Math.max(worst, Math.abs(sum - expected[bin % bins]!));
           }
+          expect(worst).toBeLessThan(1e-8);
         });
       }),
       { numRuns: 30, seed: 7 },
