@@ -2,7 +2,7 @@ import type { BoxSearchSettings } from '../core/box-search-settings.ts';
 import type { Timing } from '../core/ephemeris.ts';
 import type { FileMapping } from '../core/file-mapping.ts';
 import type { Interval } from '../core/interval.ts';
-import type { StarParameters } from '../core/light-curve.ts';
+import type { StarParameters, TimeReference } from '../core/light-curve.ts';
 import type { Recipe } from '../core/recipe.ts';
 
 /** Everything an analyst decided, and what it rests on, but for the flux itself. */
@@ -25,6 +25,8 @@ export interface FileRecord {
   readonly sha256: string;
   readonly bytes: number;
   readonly mapping: FileMapping;
+  /** Of the light curve as read: what the times of this target's cases and marks count from. */
+  readonly timeReference: TimeReference;
   readonly points: number;
   readonly warnings: readonly string[];
 }

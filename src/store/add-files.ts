@@ -129,7 +129,8 @@ export function createAddFiles(deps: Deps): AddFiles {
 
 function newTarget(id: string, name: string, bytes: number, read: LightCurveRead): Target {
   const { sha256, mapping, warnings, lightCurve, label, star } = read;
-  const file: FileRecord = { name, sha256, bytes, mapping, warnings, points: lightCurve.time.length };
+  const { time, timeReference } = lightCurve;
+  const file: FileRecord = { name, sha256, bytes, mapping, timeReference, warnings, points: time.length };
   return {
     id,
     label,

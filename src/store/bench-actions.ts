@@ -50,6 +50,17 @@ export function createBenchActions({ document, view, results, newId }: Stores) {
     else view.setState({ notice: { kind: 'notice', sentence: 'Every target of the docket is ruled or parked.' } });
   }
 
+  function selectCase(caseId: string | undefined): void {
+    view.setState({ caseId, trial: undefined, trialRank: undefined, rulingDraft: undefined });
+  }
+
+  function stepCase(): void {
+    const { target, case: chosen } = bench();
+    const cases = target?.cases ?? [];
+    const at = cases.findIndex((one) => one === chosen);
+    if (cases.length > 0) selectCase(cases[(at + 1) % cases.length]!.id);
+  }
+
   function pickPeak(peak: BoxPeak, rank: number): void {
     const { periodDays, epochDays, durationDays } = peak;
     view.setState({ caseId: undefined, trial: { periodDays, epochDays, durationDays }, trialRank: rank });
@@ -215,8 +226,8 @@ export function createBenchActions({ document, view, results, newId }: Stores) {
     selectTarget,
     stepTarget,
     goToNextUnruled,
-    selectCase: (caseId: string | undefined) =>
-      view.setState({ caseId, trial: undefined, trialRank: undefined, rulingDraft: undefined }),
+    selectCase,
+    stepCase,
     pickPeak,
     pickPeriod,
     setEphemeris,

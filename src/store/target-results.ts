@@ -17,6 +17,8 @@ export interface TargetResults {
   lightCurve(target: Target): Promise<LightCurveRead | undefined>;
   prepared(target: Target, priority?: TaskPriority): Promise<PreparedSeries | undefined>;
   search(target: Target, priority?: TaskPriority): Promise<BoxSearchResult | undefined>;
+  /** Searches even where the analyst cancelled before. */
+  searchAgain(target: Target): void;
   /** Cancels every running preparation and search that is not of these keys. */
   cancelAllBut(keys: ReadonlySet<string>): void;
   /** Cancels one running search; the target is searched again when it is next shown. */
@@ -135,6 +137,13 @@ export function createTargetResults(deps: {
     search,
     cancelAllBut(keys) {
       for (const [key, cancel] of cancels) if (!keys.has(key)) cancel();
+    },
+    searchAgain(target) {
+      const key = searchKey(target);
+      const cancelledKeys = new Set(results.getState().cancelledKeys);
+      cancelledKeys.delete(key);
+      results.setState({ cancelledKeys, failures: withoutEntry(results.getState().failures, key) });
+      void search(target);
     },
     cancel: (key) => cancels.get(key)?.(),
     cancelByHand,
