@@ -1,8 +1,9 @@
 import type { SearchSeries } from '../../src/contract/search-contract.ts';
 import { cycleOf, type Ephemeris } from '../../src/core/ephemeris.ts';
+import { median } from '../../src/core/robust-statistics.ts';
 import { findEdgeGaps, findPeriodGap } from './box-gaps.ts';
 
-/** Ingress over duration where it is not known: a central crossing of a companion of a tenth of the star's radius. */
+/** Least ingress over duration, as nothing is known of it: a companion of a tenth of the star's radius, centrally. */
 const INGRESS_FRACTION = 0.1;
 /** Variance of the place of a step in Brownian motion with drift: Yao (1987), Ann. Stat. 15, 1321 (from memory). */
 const STEP_PLACE_VARIANCE = 26;
@@ -16,7 +17,8 @@ export interface TimingErrors {
 
 /**
  * Errors of a box's timing from white noise, Q being its S/N and T its duration. The epoch's variance is the sum of
- * - T^2 / Q^2 * theta / 2, theta = 0.1: a sloped ingress, Carter et al. (2008), ApJ 689, 499, eq. 21 (sigma of t_c);
+ * - T tau / (2 Q^2): a sloped ingress of length tau, Carter et al. (2008), ApJ 689, 499 (sigma of t_c); tau is taken as
+ *   T / 10 and the cadence added in quadrature, since exposures smear it, but at most half of T;
  * - 26/2 T^2 / Q^4: where noise lets two sharp edges slide (Yao 1987), which rules at low Q;
  * - the variance of edges that may lie anywhere between the points that they part.
  * The period's error is the epoch's over the standard deviation of the cycle numbers of the points in events, as in a
@@ -27,7 +29,8 @@ export function estimateTimingErrors(series: SearchSeries, ephemeris: Ephemeris,
   const { periodDays, epochDays, durationDays } = ephemeris;
   const { leading, trailing } = findEdgeGaps(series, ephemeris);
   const sampling = ((leading[1] - leading[0]) ** 2 + (trailing[1] - trailing[0]) ** 2) / 48;
-  const ingress = (durationDays / signalToNoise) ** 2 * (INGRESS_FRACTION / 2);
+  const tau = Math.min(durationDays / 2, Math.hypot(INGRESS_FRACTION * durationDays, cadenceOf(series.time)));
+  const ingress = (durationDays * tau) / (2 * signalToNoise ** 2);
   const sliding = (STEP_PLACE_VARIANCE / 2) * (durationDays / signalToNoise ** 2) ** 2;
   const epochErrorDays = Math.sqrt(ingress + sliding + sampling);
   const cycles = describeCycles(series.time, ephemeris);
@@ -39,6 +42,8 @@ export function estimateTimingErrors(series: SearchSeries, ephemeris: Ephemeris,
     periodErrorDays: cycles.deviation > 0 ? Math.min(periodDays, periodError) : periodDays,
   };
 }
+
+const cadenceOf = (time: Float64Array): number => median(time.subarray(1).map((value, i) => value - time[i]!));
 
 /** Mean and population standard deviation of the cycle numbers of the points inside events. */
 function describeCycles(time: Float64Array, ephemeris: Ephemeris): { mean: number; deviation: number } {
