@@ -57,7 +57,7 @@ export function createBenchActions({ document, view, results, newId }: Stores) {
   function stepCase(): void {
     const { target, case: chosen } = bench();
     const cases = target?.cases ?? [];
-    const at = cases.findIndex((one) => one === chosen);
+    const at = chosen === undefined ? -1 : cases.indexOf(chosen);
     if (cases.length > 0) selectCase(cases[(at + 1) % cases.length]!.id);
   }
 
