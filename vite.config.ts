@@ -12,7 +12,7 @@ const isolation = {
 const contentSecurityPolicy = [
   "default-src 'self'",
   "script-src 'self'",
-  "style-src 'self' 'unsafe-inline'",
+  "style-src 'self'",
   "worker-src 'self'",
   "img-src 'self' blob: data:",
   "connect-src 'self'",

@@ -68,6 +68,7 @@ export function createAddFiles(deps: Deps): AddFiles {
   }
 
   function commit(batch: Batch): void {
+    results.setState({ failures: new Map() });
     const { run } = document.getState();
     if (batch.targets.length > 0) run({ kind: 'add targets', targets: batch.targets });
     if (batch.stars.length > 0) run({ kind: 'describe stars', rows: batch.stars });

@@ -1,6 +1,6 @@
 import type { Target } from '../session/document.ts';
 import type { DocumentStore } from './document-store.ts';
-import type { ResultsStore } from './results-store.ts';
+import type { ResultsState, ResultsStore } from './results-store.ts';
 import { lightCurveKey, preparedKey, searchKey } from './target-keys.ts';
 import type { TargetResults } from './target-results.ts';
 import type { ViewStore } from './view-store.ts';
@@ -31,7 +31,14 @@ export function followSelection(deps: {
     else void targetResults.search(target);
   }
 
-  const stops = [document.subscribe(follow), view.subscribe(follow)];
+  /** Files that were missing may have come: what failed is tried again. */
+  function retry(state: ResultsState, before: ResultsState) {
+    if (state.failures.size > 0 || before.failures.size === 0) return;
+    followed = '';
+    follow();
+  }
+
+  const stops = [document.subscribe(follow), view.subscribe(follow), results.subscribe(retry)];
   follow();
   return () => {
     for (const stop of stops) stop();
