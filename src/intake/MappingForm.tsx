@@ -24,7 +24,11 @@ function OneMapping({ question }: { readonly question: MappingQuestion }) {
   const waiting = useView((state) => state.mappingQuestions.length);
   const dialog = useRef<HTMLDialogElement>(null);
   const [mapping, setMapping] = useState(question.mapping);
-  useEffect(() => dialog.current?.showModal(), []);
+  const readButton = useRef<HTMLButtonElement>(null);
+  useEffect(() => {
+    dialog.current?.showModal();
+    readButton.current?.focus();
+  }, []);
   const problem = whyNotReadable(mapping);
   const { read, fileName } = question;
   const answer = (alike: boolean) => {
@@ -60,7 +64,7 @@ function OneMapping({ question }: { readonly question: MappingQuestion }) {
                 Read all files with these columns
               </button>
             )}
-            <button type="submit" className="button primary" disabled={problem !== undefined}>
+            <button ref={readButton} type="submit" className="button primary" disabled={problem !== undefined}>
               <kbd>Enter</kbd> Read with these columns
             </button>
           </div>

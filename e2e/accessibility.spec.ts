@@ -1,0 +1,69 @@
+import AxeBuilder from '@axe-core/playwright';
+import { expect, type Page, test } from '@playwright/test';
+import { BenchPage } from './bench-page.ts';
+
+async function expectNothingFound(page: Page, screen: string): Promise<void> {
+  const { violations } = await new AxeBuilder({ page })
+    .withTags(['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa', 'best-practice'])
+    .analyze();
+  const found = violations.map(
+    ({ id, nodes }) => `${screen}: ${id} at ${nodes.map(({ target }) => target).join(' | ')}`,
+  );
+  expect(found).toEqual([]);
+}
+
+for (const theme of ['dark', 'light'] as const)
+  test(`axe finds nothing on any screen, ${theme}`, async ({ page }) => {
+    await page.emulateMedia({ colorScheme: theme });
+    const bench = new BenchPage(page);
+    await page.goto('./');
+    await expect(page.getByRole('heading', { name: 'Open light curves to begin' })).toBeVisible();
+    await expectNothingFound(page, 'first run');
+    await bench.openDemo();
+    await expectNothingFound(page, 'trial');
+    await page.keyboard.press('p');
+    await page.keyboard.press('a');
+    await expectNothingFound(page, 'case');
+    await page.keyboard.press('1');
+    await expectNothingFound(page, 'ruling form');
+    await page.keyboard.press('q');
+    await page.keyboard.press('Escape');
+    for (const [key, dialog] of [
+      ['k', 'Park case 1'],
+      ['g', 'Recipe of SR-001'],
+      ['Shift+R', 'Search of SR-001'],
+      ['Shift+H', 'Make a case by hand'],
+      ['w', 'Session'],
+      ['Shift+?', 'All keys'],
+      ['Control+k', 'All commands'],
+    ] as const) {
+      await page.keyboard.press(key);
+      await expect(page.getByRole('dialog', { name: dialog })).toBeVisible();
+      await expectNothingFound(page, dialog);
+      await page.keyboard.press('Escape');
+      await expect(page.getByRole('dialog', { name: dialog })).toBeHidden();
+    }
+    await page.setViewportSize({ width: 1024, height: 700 });
+    await expectNothingFound(page, 'narrow');
+  });
+
+test('everything on the way to a ruling is reached by keys', async ({ page }) => {
+  const bench = new BenchPage(page);
+  await page.goto('./');
+  await page.keyboard.press('d');
+  await bench.searched();
+  await page.keyboard.press('F6');
+  await expect(bench.region('Docket')).toBeFocused();
+  await page.keyboard.press('ArrowDown');
+  await expect(page.getByRole('heading', { level: 1 })).toHaveText('SR-002');
+  await page.keyboard.press('ArrowUp');
+  await bench.searched();
+  await page.keyboard.press('Control+k');
+  await page.keyboard.type('strongest');
+  await page.keyboard.press('Enter');
+  await page.keyboard.press('a');
+  await page.keyboard.press('3');
+  await page.keyboard.press('w');
+  await page.keyboard.press('Enter');
+  await expect(page.getByRole('option', { name: 'SR-001' }).getByLabel('not astrophysical')).toBeVisible();
+});
