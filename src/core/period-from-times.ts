@@ -6,8 +6,8 @@ export interface PeriodFit {
 
 /** How far an event may stand from its predicted time, in durations, and still count as fitting. */
 const TOLERANCE_DURATIONS = 0.5;
-/** A spacing between neighbours is tried as 1, 2, ... this many cycles. */
-const MOST_CYCLES = 60;
+/** An event lasts at most this fraction of its period; with shorter periods any times would fit. */
+const MOST_DUTY_CYCLE = 0.25;
 
 /**
  * The longest period of which all given mid-event times are whole cycles, to half a duration, by a least-squares
@@ -21,7 +21,8 @@ export function fitPeriodToTimes(times: readonly number[], durationDays: number)
   const spacings = sorted.slice(1).map((time, i) => time - sorted[i]!);
   const shortest = Math.min(...spacings);
   if (spacings.length === 0 || !(shortest > durationDays * TOLERANCE_DURATIONS)) return undefined;
-  for (let cycles = 1; cycles <= MOST_CYCLES; cycles += 1) {
+  const mostCycles = Math.floor((shortest * MOST_DUTY_CYCLE) / durationDays);
+  for (let cycles = 1; cycles <= mostCycles; cycles += 1) {
     const fit = fitLine(sorted, shortest / cycles);
     if (fit !== undefined && worstResidual(sorted, fit) <= durationDays * TOLERANCE_DURATIONS) return fit;
   }

@@ -25,14 +25,18 @@ const ARROWS: Readonly<Record<string, readonly string[]>> = {
 async function readImports(): Promise<ICruiseResult> {
   const { output } = await cruise(
     ['src', 'workers'],
-    { baseDir: ROOT, tsPreCompilationDeps: true, doNotFollow: { path: 'node_modules' }, exclude: { path: 'node_modules' } },
+    {
+      baseDir: ROOT,
+      tsPreCompilationDeps: true,
+      doNotFollow: { path: 'node_modules' },
+      exclude: { path: 'node_modules' },
+    },
     { extensions: ['.ts', '.tsx', '.css'] } as never,
   );
   return output as ICruiseResult;
 }
 
-const folderOf = (path: string) =>
-  path.startsWith('workers/') ? 'workers' : path.split('/').slice(0, 2).join('/');
+const folderOf = (path: string) => (path.startsWith('workers/') ? 'workers' : path.split('/').slice(0, 2).join('/'));
 
 describe('the house', async () => {
   const { modules } = await readImports();
