@@ -22,7 +22,7 @@ export function CaseSheet() {
       <header className="head-line">{chosen ? <CaseLine one={chosen} /> : <h2>{target ? 'Trial' : 'Case'}</h2>}</header>
       <div className="sheet-scroll">
         {chosen ? <Origin one={chosen} /> : <TrialWords />}
-        <TimingSection />
+        <TimingSection key={chosen?.id ?? target?.id} />
         {!ruling && <NumbersSection />}
         {!ruling && <TrialActions />}
         {!ruling && <PeakTable />}
@@ -151,17 +151,16 @@ function StandingRuling({ one }: { readonly one: Case }) {
         </p>
       )}
       <RulingBar chosen={ruling?.kind} onChoose={(kind) => ruleWith(candling, kind)} />
-      {ruling ? (
+      {ruling && (
         <p className="why small">
           <b>Reasons:</b> {ruling.reasons.join('; ') || 'none given'}
           {ruling.note && `. ${ruling.note}`}
           {one.rulings.length > 1 && ` Supersedes ${one.rulings.at(-2)!.kind}.`}
         </p>
-      ) : (
-        <p className="why small quiet">
-          A ruling is the analyst’s judgement of these data, not a confirmation of a planet.
-        </p>
       )}
+      <p className="why small quiet">
+        A ruling is the analyst’s judgement of these data, not a confirmation of a planet.
+      </p>
     </section>
   );
 }

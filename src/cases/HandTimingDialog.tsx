@@ -1,6 +1,8 @@
 import { useEffect, useRef, useState } from 'react';
 import { singleTiming } from '../store/bench-actions.ts';
 import { useBench, useCandling } from '../store/use-candling.ts';
+import { HOURS_A_DAY, readHandTiming } from './hand-timing.ts';
+import { openTyped } from './typed-number.ts';
 
 /** A case from numbers that the analyst brings: a period of another source, or one event. */
 export function HandTimingDialog({ onLeave }: { readonly onLeave: () => void }) {
@@ -8,29 +10,22 @@ export function HandTimingDialog({ onLeave }: { readonly onLeave: () => void }) 
   const { target, ephemeris, prepared } = useBench();
   const dialog = useRef<HTMLDialogElement>(null);
   const [kind, setKind] = useState<'linear' | 'single'>('linear');
-  const [period, setPeriod] = useState(
-    ephemeris === undefined ? '' : String(Number(ephemeris.periodDays.toPrecision(9))),
-  );
-  const [epoch, setEpoch] = useState(ephemeris === undefined ? '' : String(Number(ephemeris.epochDays.toPrecision(9))));
-  const [hours, setHours] = useState(
-    ephemeris === undefined ? '' : String(Number((ephemeris.durationDays * 24).toPrecision(4))),
-  );
+  const [period, setPeriod] = useState(ephemeris === undefined ? '' : openTyped(ephemeris.periodDays));
+  const [epoch, setEpoch] = useState(ephemeris === undefined ? '' : openTyped(ephemeris.epochDays));
+  const [hours, setHours] = useState(ephemeris === undefined ? '' : openTyped(ephemeris.durationDays * HOURS_A_DAY));
   useEffect(() => dialog.current?.showModal(), []);
   if (target === undefined) return null;
-  const epochDays = epoch.trim() === '' ? Number.NaN : Number(epoch);
-  const durationDays = Number(hours) / 24;
-  const periodDays = Number(period);
-  const usable = Number.isFinite(epochDays) && durationDays > 0 && (kind === 'single' || periodDays > durationDays);
+  const handTiming = readHandTiming({ kind, period, epoch, hours });
+  const isUsable = handTiming !== undefined;
   return (
     <dialog ref={dialog} className="sheet" aria-label="Make a case by hand" onClose={onLeave}>
       <form
         onSubmit={(event) => {
           event.preventDefault();
-          if (!usable) return;
+          if (handTiming === undefined) return;
+          const { epochDays, durationDays } = handTiming;
           actions.makeCaseByHand(
-            kind === 'linear'
-              ? { kind, periodDays, epochDays, durationDays }
-              : singleTiming(epochDays, durationDays, prepared?.time),
+            handTiming.kind === 'linear' ? handTiming : singleTiming(epochDays, durationDays, prepared?.time),
           );
           dialog.current?.close();
         }}
@@ -50,11 +45,18 @@ export function HandTimingDialog({ onLeave }: { readonly onLeave: () => void }) 
           {kind === 'linear' && <Field label="period / d" text={period} onChange={setPeriod} />}
           <Field label="mid-event time / d, as on the strip" text={epoch} onChange={setEpoch} />
           <Field label="duration / h" text={hours} onChange={setHours} />
+          {!isUsable && (
+            <p className="small quiet">
+              {kind === 'linear'
+                ? 'A case needs a time, a duration over 0 and a period longer than the duration.'
+                : 'A case needs a time and a duration over 0.'}
+            </p>
+          )}
           <div className="sheet-actions">
             <button type="button" className="button" onClick={() => dialog.current?.close()}>
               <kbd>Esc</kbd> Leave
             </button>
-            <button type="submit" className="button primary" disabled={!usable}>
+            <button type="submit" className="button primary" disabled={!isUsable}>
               <kbd>Enter</kbd> Make the case
             </button>
           </div>

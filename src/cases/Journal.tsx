@@ -15,7 +15,7 @@ export function Journal() {
   return (
     <section className="sheet-section" aria-label="Journal">
       <h3>
-        Journal <small>{chosen === undefined ? target.label : `case ${chosen.number}`}, newest first</small>
+        Journal <small>{chosen === undefined ? target.label : `case ${chosen.number}`}, newest first, UTC</small>
       </h3>
       <ul className="journal small">
         {own

@@ -2,10 +2,12 @@ import { formatNumber, formatValueWithError } from '../core/number-format.ts';
 import { describeRecipe } from '../session/describe-recipe.ts';
 import { preparedKey, searchKey } from '../store/target-keys.ts';
 import { useBench, useCandling } from '../store/use-candling.ts';
+import { measureAgain } from './measure-again.ts';
 
 /** What was measured of the case, on which series, and whether that series still stands. */
 export function NumbersSection() {
-  const { actions, files, view } = useCandling();
+  const candling = useCandling();
+  const { files, view } = candling;
   const { target, case: chosen, ephemeris, prepared } = useBench();
   if (target === undefined || chosen === undefined) return null;
   const { numbers } = chosen;
@@ -30,7 +32,7 @@ export function NumbersSection() {
             type="button"
             className="button compact"
             disabled={ephemeris === undefined || prepared === undefined}
-            onClick={() => ephemeris && actions.setEphemeris(ephemeris)}
+            onClick={() => measureAgain(candling)}
           >
             measure again
           </button>

@@ -3,11 +3,12 @@ import { useBench, useCandling } from '../store/use-candling.ts';
 
 /** What the case waits for, and until when. */
 export function ParkDialog({ onLeave }: { readonly onLeave: () => void }) {
-  const { document } = useCandling();
+  const { document, view } = useCandling();
   const { target, case: chosen } = useBench();
   const dialog = useRef<HTMLDialogElement>(null);
   const [reason, setReason] = useState(chosen?.parked?.reason ?? '');
   const [until, setUntil] = useState(chosen?.parked?.until ?? '');
+  const [refusal, setRefusal] = useState<string>();
   useEffect(() => dialog.current?.showModal(), []);
   if (target === undefined || chosen === undefined) return null;
   return (
@@ -22,7 +23,11 @@ export function ParkDialog({ onLeave }: { readonly onLeave: () => void }) {
             reason: reason.trim(),
             until: until || undefined,
           });
-          if (parked) dialog.current?.close();
+          if (parked) {
+            // A ruling begun on the case was given up for parking it.
+            view.setState({ rulingDraft: undefined });
+            dialog.current?.close();
+          } else setRefusal(document.getState().refusal);
         }}
       >
         <header className="head-line">
@@ -45,7 +50,24 @@ export function ParkDialog({ onLeave }: { readonly onLeave: () => void }) {
             until (empty: no date)
             <input className="field" type="date" value={until} onChange={(event) => setUntil(event.target.value)} />
           </label>
+          {refusal !== undefined && (
+            <p className="notice error" role="alert">
+              {refusal}
+            </p>
+          )}
           <div className="sheet-actions">
+            {chosen.parked && (
+              <button
+                type="button"
+                className="button"
+                onClick={() => {
+                  document.getState().run({ kind: 'unpark', targetId: target.id, caseId: chosen.id });
+                  dialog.current?.close();
+                }}
+              >
+                Take up again
+              </button>
+            )}
             <button type="button" className="button" onClick={() => dialog.current?.close()}>
               <kbd>Esc</kbd> Leave
             </button>

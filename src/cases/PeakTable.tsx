@@ -25,8 +25,8 @@ export function PeakTable() {
                 <span className="visually-hidden">rank</span>
               </th>
               <th scope="col">period / d</th>
-              <th scope="col">depth / {inSigma ? 'σ' : 'ppm'}</th>
-              <th scope="col">h</th>
+              <th scope="col">box depth / {inSigma ? 'σ' : 'ppm'}</th>
+              <th scope="col">duration / h</th>
               <th scope="col">SDE</th>
               <th scope="col">S/N</th>
               <th scope="col">events</th>
@@ -39,7 +39,15 @@ export function PeakTable() {
               );
               return (
                 <tr key={peak.periodDays} className={rank === index + 1 ? 'at' : undefined}>
-                  <td>{claimed ? <CaseShape caseNumber={claimed.number} sizePx={10} /> : index + 1}</td>
+                  <td>
+                    {index + 1}
+                    {claimed && (
+                      <span className="claimed" title={`case ${claimed.number}`}>
+                        <CaseShape caseNumber={claimed.number} sizePx={10} />
+                        <span className="visually-hidden">case {claimed.number}</span>
+                      </span>
+                    )}
+                  </td>
                   <td>
                     <button type="button" className="link number" onClick={() => actions.pickPeak(peak, index + 1)}>
                       {formatNumber(peak.periodDays, 5)}

@@ -1,12 +1,12 @@
-import { type KeyboardEvent, useEffect, useRef, useState } from 'react';
-import { CONFIDENCES, RULING_KINDS } from '../session/document.ts';
+import { type KeyboardEvent, type RefObject, useEffect, useRef, useState } from 'react';
+import { CONFIDENCES } from '../session/document.ts';
 import { reasonsFor } from '../session/reasons.ts';
 import { standingRuling } from '../session/selectors.ts';
 import { useBench, useCandling, useView } from '../store/use-candling.ts';
 import type { RulingDraft } from '../store/view-store.ts';
 import { RulingBar } from './RulingBar.tsx';
 import { nextAfterRecording, recordRuling, ruleWith } from './ruling-actions.ts';
-import { CONFIDENCE_MEANING, stepConfidence, toggleReason, toggleReasonByKey } from './ruling-draft.ts';
+import { CONFIDENCE_MEANING, draftAfterKey, toggleReason } from './ruling-draft.ts';
 
 /** The ruling being made: nothing is recorded until Enter. */
 export function RulingForm() {
@@ -25,23 +25,29 @@ function OpenForm({ draft }: { readonly draft: RulingDraft }) {
   const standing = chosen && standingRuling(chosen);
   const next = nextAfterRecording(candling);
 
-  function onKeyDown(event: KeyboardEvent<HTMLFormElement>): void {
-    const typing = event.target instanceof HTMLElement && event.target.matches('input[type="text"], textarea');
-    if (event.key === 'Escape') leave();
-    else if (event.key === 'Enter' && (!typing || event.ctrlKey || event.metaKey)) {
-      if (event.target instanceof HTMLButtonElement && event.target.type === 'button') return;
-      record();
-    } else if (typing || event.ctrlKey || event.metaKey || event.altKey) return;
-    else if (RULING_KINDS[Number(event.key) - 1] !== undefined)
-      ruleWith(candling, RULING_KINDS[Number(event.key) - 1]!);
-    else if (event.key === 'j') set(stepConfidence(draft, -1));
-    else if (event.key === 'l') set(stepConfidence(draft, 1));
-    else if (event.key === 'u') form.current?.querySelector<HTMLInputElement>('#own-reason')?.focus();
-    else if (event.key === 'k') candling.view.setState({ rulingDraft: undefined, dialog: 'park' });
-    else if (toggleReasonByKey(draft, event.key) !== draft) set(toggleReasonByKey(draft, event.key));
-    else return;
-    event.preventDefault();
+  /** True where the key meant something here. */
+  function takeKey({ key, ctrlKey, metaKey, altKey }: Key): boolean {
+    const after = draftAfterKey(draft, key);
+    if (key === 'Escape') leave();
+    else if (key === 'Enter') record();
+    else if (ctrlKey || metaKey || altKey) return false;
+    else if (after !== undefined) set(after);
+    else if (key.toLowerCase() === 'u') form.current?.querySelector<HTMLInputElement>('#own-reason')?.focus();
+    else if (key.toLowerCase() === 'k') candling.view.setState({ dialog: 'park' });
+    else return false;
+    return true;
   }
+
+  function onKeyDown(event: KeyboardEvent<HTMLFormElement>): void {
+    const isTyping = event.target instanceof HTMLElement && event.target.matches('input[type="text"], textarea');
+    const isOurs = event.key === 'Escape' || (event.key === 'Enter' && (event.ctrlKey || event.metaKey));
+    if (isTyping && !isOurs) return;
+    // Enter on a button presses it.
+    if (event.key === 'Enter' && event.target instanceof HTMLButtonElement && event.target.type === 'button') return;
+    if (takeKey(event)) event.preventDefault();
+  }
+
+  useKeysElsewhere(form, takeKey);
 
   return (
     <form
@@ -96,7 +102,7 @@ function OpenForm({ draft }: { readonly draft: RulingDraft }) {
       </p>
       <div className="ruling-actions">
         <button type="submit" className="button primary">
-          <kbd>Enter</kbd> {next === undefined ? 'Record' : `Record, go to ${next}`}
+          <kbd>Enter</kbd> {next === undefined ? 'Record' : `Record and go to ${next}`}
         </button>
         <button type="button" className="button" onClick={leave}>
           <kbd>Esc</kbd> Leave
@@ -104,6 +110,25 @@ function OpenForm({ draft }: { readonly draft: RulingDraft }) {
       </div>
     </form>
   );
+}
+
+type Key = Pick<globalThis.KeyboardEvent, 'key' | 'ctrlKey' | 'metaKey' | 'altKey'>;
+
+/** After a look at the plots with the mouse the form's keys still work, but for where text is typed or a button has Enter. */
+function useKeysElsewhere(form: RefObject<HTMLFormElement | null>, takeKey: (key: Key) => boolean): void {
+  const { view } = useCandling();
+  useEffect(() => {
+    const listen = (event: globalThis.KeyboardEvent) => {
+      const { dialog, mappingQuestions } = view.getState();
+      if (event.defaultPrevented || dialog !== undefined || mappingQuestions.length > 0) return;
+      const at = event.target instanceof HTMLElement ? event.target : document.body;
+      if (form.current?.contains(at) || at.matches('input, textarea, select')) return;
+      if (event.key === 'Enter' && at.matches('button, a, [role="option"], [role="listbox"]')) return;
+      if (takeKey(event)) event.preventDefault();
+    };
+    globalThis.addEventListener('keydown', listen);
+    return () => globalThis.removeEventListener('keydown', listen);
+  });
 }
 
 interface ReasonsProps {
@@ -167,10 +192,12 @@ function OwnReason({ draft, onChange }: ReasonsProps) {
         onChange={(event) => setText(event.target.value)}
         onBlur={add}
         onKeyDown={(event) => {
-          if (event.key !== 'Enter' || event.ctrlKey) return;
+          if (event.key !== 'Enter') return;
+          add();
+          // With Ctrl the form records, this reason with it.
+          if (event.ctrlKey || event.metaKey) return;
           event.preventDefault();
           event.stopPropagation();
-          add();
           event.currentTarget.closest('form')?.focus();
         }}
       />

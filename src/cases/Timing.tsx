@@ -28,6 +28,7 @@ export function TimingSection() {
             value={linear.periodDays}
             error={linear.periodErrorDays}
             decimals={5}
+            mustBePositive
             onCommit={(periodDays) => set({ periodDays })}
           />
         )}
@@ -49,6 +50,7 @@ export function TimingSection() {
           value={ephemeris.durationDays * 24}
           error={linear?.durationErrorDays === undefined ? undefined : linear.durationErrorDays * 24}
           decimals={2}
+          mustBePositive
           onCommit={(hours) => set({ durationDays: hours / 24 })}
         />
         {single && (
@@ -82,9 +84,10 @@ function Row(props: {
   readonly value: number;
   readonly error: number | undefined;
   readonly decimals: number;
+  readonly mustBePositive?: boolean;
   readonly onCommit: (value: number) => void;
 }) {
-  const { symbol, index, name, unit, value, error, decimals, onCommit } = props;
+  const { symbol, index, name, unit, value, error, decimals, mustBePositive = false, onCommit } = props;
   const shown = formatValueWithError(value, error, decimals);
   return (
     <>
@@ -94,7 +97,13 @@ function Row(props: {
       </span>
       <span className="name">{name}</span>
       <span className="value">
-        <EditableValue label={`${name} in ${unit}`} shown={shown.value} value={value} onCommit={onCommit} />
+        <EditableValue
+          label={`${name} in ${unit}`}
+          shown={shown.value}
+          value={value}
+          mustBePositive={mustBePositive}
+          onCommit={onCommit}
+        />
       </span>
       <span className="error number">{shown.error}</span>
       <span className="unit">{unit}</span>

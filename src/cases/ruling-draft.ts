@@ -1,4 +1,4 @@
-import { type Case, CONFIDENCES, type RulingKind } from '../session/document.ts';
+import { type Case, CONFIDENCES, RULING_KINDS, type RulingKind } from '../session/document.ts';
 import { reasonsFor } from '../session/reasons.ts';
 import { standingRuling } from '../session/selectors.ts';
 import type { RulingDraft } from '../store/view-store.ts';
@@ -32,6 +32,16 @@ export function toggleReasonByKey(draft: RulingDraft, key: string): RulingDraft 
 export function stepConfidence(draft: RulingDraft, step: 1 | -1): RulingDraft {
   const at = CONFIDENCES.indexOf(draft.confidence) + step;
   return { ...draft, confidence: CONFIDENCES[Math.max(0, Math.min(CONFIDENCES.length - 1, at))]! };
+}
+
+/** The draft after a key of the form: 1 to 4 rule, J and L step confidence, letters are reasons. Undefined: no such key. */
+export function draftAfterKey(draft: RulingDraft, key: string): RulingDraft | undefined {
+  const kind = RULING_KINDS[Number(key) - 1];
+  if (kind !== undefined) return changeKind(draft, kind);
+  if (key.toLowerCase() === 'j') return stepConfidence(draft, -1);
+  if (key.toLowerCase() === 'l') return stepConfidence(draft, 1);
+  const next = toggleReasonByKey(draft, key);
+  return next === draft ? undefined : next;
 }
 
 /** What each step of confidence means, so that two analysts mean the same. */

@@ -25,16 +25,34 @@ export function exportVettingLog(candling: Candling, format: 'csv' | 'json'): vo
   else saveFile(name, writeVettingLogJson(document, stamp), 'application/json');
 }
 
-/** Opens a session file in place of what is open; a broken or foreign one is refused and changes nothing. */
-export async function importSession(candling: Candling, file: File): Promise<void> {
-  const read = readSession(await file.text(), file.name);
-  if (read.kind === 'refused') {
-    candling.view.setState({ notice: { kind: 'error', sentence: read.sentence } });
-    return;
+/** Opens a session file in place of what is open; one that cannot be, or that would undo decisions, changes nothing. */
+export async function importSession(candling: Candling, file: Pick<File, 'name' | 'text'>): Promise<void> {
+  const { view } = candling;
+  const refuse = (sentence: string) => view.setState({ notice: { kind: 'error', sentence } });
+  try {
+    const read = readSession(await file.text(), file.name);
+    if (read.kind === 'refused') return refuse(read.sentence);
+    const open = committed(candling);
+    const ahead = open === undefined ? 0 : entriesAhead(open, read.document);
+    if (ahead > 0) return refuse(olderWords(file.name, ahead));
+    await candling.openSession(read.document);
+    const missing = await missingFiles(candling, read.document);
+    if (missing.length > 0) view.setState({ notice: { kind: 'notice', sentence: missingWords(missing) } });
+  } catch (cause) {
+    refuse(`${file.name} was not opened. The browser said: ${cause instanceof Error ? cause.message : String(cause)}.`);
   }
-  await candling.openSession(read.document);
-  const missing = await missingFiles(candling, read.document);
-  if (missing.length > 0) candling.view.setState({ notice: { kind: 'notice', sentence: missingWords(missing) } });
+}
+
+/** How many journal entries of the open session an older copy of it lacks: opening the copy would lose them. */
+export function entriesAhead(open: SessionDocument, copy: SessionDocument): number {
+  if (open.id !== copy.id) return 0;
+  const known = new Set(copy.journal.map(({ id }) => id));
+  return open.journal.filter(({ id }) => !known.has(id)).length;
+}
+
+function olderWords(fileName: string, ahead: number): string {
+  const entries = ahead === 1 ? '1 journal entry' : `${ahead} journal entries`;
+  return `${fileName} was not opened. It is an earlier state of the open session and lacks ${entries} of it. To go back to it, export the open session, start a new one, then import this file. Nothing was changed.`;
 }
 
 async function missingFiles(candling: Candling, document: SessionDocument): Promise<readonly string[]> {
@@ -46,7 +64,7 @@ async function missingFiles(candling: Candling, document: SessionDocument): Prom
 
 const MOST_NAMED = 5;
 
-function missingWords(names: readonly string[]): string {
+export function missingWords(names: readonly string[]): string {
   const named = names.slice(0, MOST_NAMED).join(', ');
   const more = names.length > MOST_NAMED ? ` and ${names.length - MOST_NAMED} more` : '';
   const files = names.length === 1 ? '1 file of this session is' : `${names.length} files of this session are`;

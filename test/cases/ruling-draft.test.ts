@@ -1,5 +1,11 @@
 import { describe, expect, it } from 'vitest';
-import { changeKind, openDraft, stepConfidence, toggleReasonByKey } from '../../src/cases/ruling-draft.ts';
+import {
+  changeKind,
+  draftAfterKey,
+  openDraft,
+  stepConfidence,
+  toggleReasonByKey,
+} from '../../src/cases/ruling-draft.ts';
 import { RULING_KINDS } from '../../src/session/document.ts';
 import { reasonsFor } from '../../src/session/reasons.ts';
 
@@ -32,5 +38,14 @@ describe('ruling draft', () => {
       expect(new Set(keys).size).toBe(keys.length);
       expect(keys.filter((key) => ['j', 'l', 'k', 'u'].includes(key))).toEqual([]);
     }
+  });
+
+  it('understands the keys of the form and no others', () => {
+    expect(draftAfterKey(fresh, '1')?.kind).toBe('worth telescope time');
+    expect(draftAfterKey(fresh, 'L')?.confidence).toBe('high');
+    expect(draftAfterKey(fresh, 'j')?.confidence).toBe('low');
+    expect(draftAfterKey(fresh, 'E')?.reasons).toEqual([reasonsFor('stellar mimic')[2]!.text]);
+    for (const key of ['0', '5', 'k', 'u', 'Tab', 'Enter', ' ', 'ArrowDown'])
+      expect(draftAfterKey(fresh, key), key).toBeUndefined();
   });
 });
