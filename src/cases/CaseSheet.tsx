@@ -101,7 +101,7 @@ function TrialActions() {
     <section className="sheet-section trial-actions" aria-label="Make a case">
       <button
         type="button"
-        className="button primary"
+        className={ephemeris === undefined ? 'button' : 'button primary'}
         disabled={ephemeris === undefined}
         onClick={() => actions.makeCaseFromTrial()}
       >

@@ -56,7 +56,7 @@ export function HandTimingDialog({ onLeave }: { readonly onLeave: () => void }) 
             <button type="button" className="button" onClick={() => dialog.current?.close()}>
               <kbd>Esc</kbd> Leave
             </button>
-            <button type="submit" className="button primary" disabled={!isUsable}>
+            <button type="submit" className={isUsable ? 'button primary' : 'button'} disabled={!isUsable}>
               <kbd>Enter</kbd> Make the case
             </button>
           </div>

@@ -24,9 +24,9 @@ export function PeakTable() {
               <th scope="col">
                 <span className="visually-hidden">rank</span>
               </th>
-              <th scope="col">period / d</th>
-              <th scope="col">box depth / {inSigma ? 'σ' : 'ppm'}</th>
-              <th scope="col">duration / h</th>
+              <th scope="col">period /&nbsp;d</th>
+              <th scope="col">box depth /&nbsp;{inSigma ? 'σ' : 'ppm'}</th>
+              <th scope="col">duration /&nbsp;h</th>
               <th scope="col">SDE</th>
               <th scope="col">S/N</th>
               <th scope="col">events</th>
