@@ -30,15 +30,24 @@ export function KeyLine() {
         </>
       ) : (
         availableCommands(candling)
-          .filter(({ foot }) => foot !== undefined)
-          .map(({ foot, keys }) => (
-            <span key={foot} className="hint">
-              <KeyWords keys={keys[0]!} /> {foot}
+          .flatMap(({ foot }) => (foot === undefined ? [] : [foot]))
+          .map(({ keys, words }) => (
+            <span key={words} className="hint">
+              {keys.map((key) => (
+                <KeyWords key={key} keys={key} />
+              ))}
+              {words}
             </span>
           ))
       )}
       <span className="spread" />
-      <span className="quiet">{analyst ? `Analyst ${analyst}, ` : ''}works offline</span>
+      {analyst === '' ? (
+        <button type="button" className="top-key" onClick={() => candling.view.setState({ dialog: 'session' })}>
+          <kbd>W</kbd> name the analyst
+        </button>
+      ) : (
+        <span className="quiet">{analyst === undefined ? 'works offline' : `Analyst ${analyst}, works offline`}</span>
+      )}
     </footer>
   );
 }

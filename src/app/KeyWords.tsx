@@ -3,9 +3,26 @@ export function KeyWords({ keys }: { readonly keys: string }) {
   return (
     <span className="key-words">
       {keyWords(keys).map((word) => (
-        <kbd key={word}>{word}</kbd>
+        <kbd key={word}>{ARROWS[word] === undefined ? word : <ArrowSign word={word} />}</kbd>
       ))}
     </span>
+  );
+}
+
+/** The bundled faces have no arrows: they are drawn. Degrees from pointing left. */
+const ARROWS: Readonly<Record<string, number>> = { left: 0, up: 90, right: 180, down: 270 };
+
+function ArrowSign({ word }: { readonly word: string }) {
+  return (
+    <svg width="11" height="9" viewBox="-5.5 -4.5 11 9" role="img" aria-label={word}>
+      <path
+        d="M5 0H-4.5M-1.5 -3L-4.5 0L-1.5 3"
+        fill="none"
+        stroke="currentColor"
+        strokeWidth="1.2"
+        transform={`rotate(${ARROWS[word]})`}
+      />
+    </svg>
   );
 }
 

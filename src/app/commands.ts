@@ -1,3 +1,4 @@
+import { isNarrow } from '../bench/narrow.ts';
 import { RULING_KINDS } from '../session/document.ts';
 import type { Candling } from '../store/candling.ts';
 import type { RoomActions } from './room-actions.ts';
@@ -10,7 +11,7 @@ export interface AppCommand {
   /** In the syntax of tinykeys. */
   readonly keys: readonly string[];
   /** Where it is one of the few on the key line at the foot: its word there. */
-  readonly foot?: string;
+  readonly foot?: { readonly keys: readonly string[]; readonly words: string };
   /** Absent: always. */
   readonly when?: (candling: Candling) => boolean;
   readonly run: (candling: Candling, rooms: RoomActions) => void;
@@ -26,7 +27,13 @@ const hasMark = (candling: Candling) => candling.view.getState().selectedMarkId 
 const isRunning = (candling: Candling) => candling.actions.bench().running !== undefined;
 
 export const COMMANDS: readonly AppCommand[] = [
-  { title: 'Open files', room: 'files', keys: ['o'], foot: 'open', run: (_, rooms) => rooms.openFiles() },
+  {
+    title: 'Open files',
+    room: 'files',
+    keys: ['o'],
+    foot: { keys: ['o'], words: 'open' },
+    run: (_, rooms) => rooms.openFiles(),
+  },
   { title: 'Open a folder', room: 'files', keys: ['Shift+O'], run: (_, rooms) => rooms.openFolder() },
   {
     title: 'Reopen the last session',
@@ -45,7 +52,7 @@ export const COMMANDS: readonly AppCommand[] = [
     title: 'Try the demo docket',
     room: 'files',
     keys: ['d'],
-    foot: 'demo docket',
+    foot: { keys: ['d'], words: 'demo docket' },
     when: isEmpty,
     run: (_, rooms) => rooms.loadDemo(),
   },
@@ -53,7 +60,7 @@ export const COMMANDS: readonly AppCommand[] = [
     title: 'Next unruled target',
     room: 'docket',
     keys: ['n'],
-    foot: 'next unruled',
+    foot: { keys: ['n'], words: 'next unruled' },
     when: hasTargets,
     run: ({ actions }) => actions.goToNextUnruled(),
   },
@@ -83,7 +90,7 @@ export const COMMANDS: readonly AppCommand[] = [
     title: 'Raw, trend or prepared flux',
     room: 'strip',
     keys: ['t'],
-    foot: 'flux shown',
+    foot: { keys: ['t'], words: 'flux shown' },
     when: hasTargets,
     run: ({ view }) => {
       const next = { raw: 'trend', trend: 'prepared', prepared: 'raw' } as const;
@@ -101,7 +108,7 @@ export const COMMANDS: readonly AppCommand[] = [
     title: 'Next event',
     room: 'strip',
     keys: ['Shift+ArrowRight'],
-    foot: 'event',
+    foot: { keys: ['Shift+ArrowRight'], words: 'event' },
     when: hasEphemeris,
     run: ({ actions }) => actions.stepEvent(1),
   },
@@ -116,7 +123,7 @@ export const COMMANDS: readonly AppCommand[] = [
     title: 'Mark tool on or off',
     room: 'strip',
     keys: ['m'],
-    foot: 'mark',
+    foot: { keys: ['m'], words: 'mark' },
     when: hasTargets,
     run: ({ view }) => view.setState({ tool: view.getState().tool === 'mark' ? 'pan' : 'mark' }),
   },
@@ -148,7 +155,7 @@ export const COMMANDS: readonly AppCommand[] = [
     title: 'Period a step longer',
     room: 'fold',
     keys: ['ArrowRight'],
-    foot: 'period',
+    foot: { keys: ['ArrowLeft', 'ArrowRight'], words: 'period' },
     when: hasEphemeris,
     run: ({ actions }) => actions.nudge('period', 1),
   },
@@ -191,7 +198,7 @@ export const COMMANDS: readonly AppCommand[] = [
     title: 'Halve the period',
     room: 'fold',
     keys: ['h'],
-    foot: 'halve',
+    foot: { keys: ['h'], words: 'halve' },
     when: hasEphemeris,
     run: ({ actions }) => actions.scalePeriod(0.5),
   },
@@ -199,7 +206,7 @@ export const COMMANDS: readonly AppCommand[] = [
     title: 'Double the period',
     room: 'fold',
     keys: ['d'],
-    foot: 'double',
+    foot: { keys: ['d'], words: 'double' },
     when: (candling) => hasTargets(candling) && hasEphemeris(candling),
     run: ({ actions }) => actions.scalePeriod(2),
   },
@@ -222,7 +229,7 @@ export const COMMANDS: readonly AppCommand[] = [
     room: 'search',
     keys: ['y'],
     when: hasTargets,
-    run: ({ view }) => view.setState({ periodogramHidden: !view.getState().periodogramHidden }),
+    run: ({ view }) => view.setState({ periodogramHidden: !(view.getState().periodogramHidden ?? isNarrow()) }),
   },
   {
     title: 'Arrange for folding or for searching',
@@ -235,7 +242,7 @@ export const COMMANDS: readonly AppCommand[] = [
     title: 'Make a case of the trial',
     room: 'case',
     keys: ['a'],
-    foot: 'make a case',
+    foot: { keys: ['a'], words: 'make a case' },
     when: hasTrial,
     run: ({ actions }) => actions.makeCaseFromTrial(),
   },
@@ -280,7 +287,7 @@ export const COMMANDS: readonly AppCommand[] = [
     title: 'Park until…',
     room: 'ruling',
     keys: ['k'],
-    foot: 'park',
+    foot: { keys: ['k'], words: 'park' },
     when: hasCase,
     run: ({ view }) => view.setState({ dialog: 'park' }),
   },

@@ -3,6 +3,7 @@ import { numberLabel } from '../plot/number-label.ts';
 import { useBench, useCandling, useDocument, useView } from '../store/use-candling.ts';
 import { FoldPane } from './FoldPane.tsx';
 import { MarkForm } from './MarkForm.tsx';
+import { useNarrow } from './narrow.ts';
 import { PeriodogramPane } from './PeriodogramPane.tsx';
 import { StripPane } from './StripPane.tsx';
 import { TargetLine } from './TargetLine.tsx';
@@ -11,6 +12,7 @@ import './bench.css';
 /** The plots of the selected target, one over another, sharing the selected case. */
 export function Bench({ chips }: { readonly chips: ReactNode }) {
   const { arrangement, periodogramHidden } = useView((state) => state);
+  const narrow = useNarrow();
   return (
     <main className={`bench ${arrangement}`} aria-label="Bench" data-region="bench" tabIndex={-1}>
       <TargetLine chips={chips} />
@@ -19,7 +21,7 @@ export function Bench({ chips }: { readonly chips: ReactNode }) {
         <StripPane />
         <MarkForm />
         <FoldPane />
-        {periodogramHidden ? <PeriodogramLine /> : <PeriodogramPane />}
+        {(periodogramHidden ?? (narrow && arrangement === 'fold')) ? <PeriodogramLine /> : <PeriodogramPane />}
       </div>
     </main>
   );

@@ -39,7 +39,7 @@ export function NumbersSection() {
         </p>
       )}
       <div className={`numbers${stale ? ' stale' : ''}`}>
-        <span className="symbol">δ</span>
+        <span />
         <span className="name">box depth</span>
         <span className="value number">{depth.value}</span>
         <span className="error number">{depth.error}</span>

@@ -11,9 +11,9 @@ export function Egg() {
     <svg className="egg" viewBox="0 0 300 432" aria-hidden="true">
       <defs>
         <radialGradient id="glow" cx="0.5" cy="0.62" r="0.62">
-          <stop offset="0" stopColor="#a8752f" />
-          <stop offset="0.45" stopColor="#63451f" />
-          <stop offset="1" stopColor="#1d1a12" />
+          <stop offset="0" stopColor="var(--egg-heart)" />
+          <stop offset="0.45" stopColor="var(--egg-body)" />
+          <stop offset="1" stopColor="var(--egg-edge)" />
         </radialGradient>
       </defs>
       <path
@@ -26,7 +26,7 @@ export function Egg() {
         drop files here
       </text>
       {POINTS.map(({ x, y }) => (
-        <circle key={x} cx={x} cy={y} r="1.3" fill="#f6f0e1" />
+        <circle key={x} cx={x} cy={y} r="1.3" fill="var(--bin)" />
       ))}
       <g className="egg-scale">
         <path d="M1 416H299" />

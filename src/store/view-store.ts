@@ -60,7 +60,8 @@ export interface ViewState {
   readonly selectedMarkId: string | undefined;
   readonly docketHidden: boolean;
   readonly sheetHidden: boolean;
-  readonly periodogramHidden: boolean;
+  /** Undefined: by the width of the window. */
+  readonly periodogramHidden: boolean | undefined;
   readonly dialog: Dialog | undefined;
   readonly filter: string;
   readonly rulingDraft: RulingDraft | undefined;
@@ -100,7 +101,7 @@ const FRESH: ViewState = {
   selectedMarkId: undefined,
   docketHidden: false,
   sheetHidden: false,
-  periodogramHidden: false,
+  periodogramHidden: undefined,
   dialog: undefined,
   filter: '',
   rulingDraft: undefined,
