@@ -18,7 +18,7 @@ export function openCandling(): Candling {
 }
 
 /** An invented star with a box of 1 % every 1.5 days; `depth` tells files of several stars apart. */
-export function starFile(name: string, depth = 0.01) {
+function starFile(name: string, depth = 0.01) {
   const rows = Array.from({ length: 400 }, (_, i) => {
     const days = i / 48;
     return `${2459000 + days},${Math.abs(((days + 0.25) % 1.5) - 0.75) < 0.05 ? 1 - depth : 1},0.0003`;
