@@ -50,6 +50,7 @@ for (const theme of ['dark', 'light'] as const)
 test('everything on the way to a ruling is reached by keys', async ({ page }) => {
   const bench = new BenchPage(page);
   await page.goto('./');
+  await expect(page.getByRole('heading', { name: 'Open light curves to begin' })).toBeVisible();
   await page.keyboard.press('d');
   await bench.searched();
   await page.keyboard.press('F6');

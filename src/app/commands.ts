@@ -39,7 +39,7 @@ export const COMMANDS: readonly AppCommand[] = [
     title: 'Reopen the last session',
     room: 'files',
     keys: ['r'],
-    when: (candling) => !hasSession(candling),
+    when: isEmpty,
     run: (candling) => void candling.reopenLast(),
   },
   {

@@ -11,11 +11,14 @@ export function chooseFiles(options: {
   input.multiple = options.multiple ?? true;
   input.webkitdirectory = options.folder ?? false;
   if (options.accept !== undefined) input.accept = options.accept;
-  return new Promise((resolve) => {
+  // An input outside the document may be collected, or not open its chooser, before the analyst has answered.
+  input.hidden = true;
+  document.body.append(input);
+  return new Promise<readonly File[]>((resolve) => {
     input.addEventListener('change', () => resolve([...(input.files ?? [])]));
     input.addEventListener('cancel', () => resolve([]));
     input.click();
-  });
+  }).finally(() => input.remove());
 }
 
 export function incoming(files: readonly File[]): readonly IncomingFile[] {

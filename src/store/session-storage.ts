@@ -18,6 +18,7 @@ interface CandlingDatabase extends DBSchema {
 }
 
 export interface SessionStorage {
+  /** The session saved last that has a target in it: an empty one is nothing to come back to. */
   lastSession(): Promise<SavedSession | undefined>;
   saveSession(session: SavedSession): Promise<void>;
   saveFile(sha256: string, name: string, bytes: ArrayBuffer): Promise<void>;
@@ -34,10 +35,12 @@ export function createSessionStorage(name = 'candling'): SessionStorage {
   return {
     async lastSession() {
       const sessions = await (await opened).getAll('sessions');
-      return sessions.reduce<SavedSession | undefined>(
-        (latest, session) => (latest === undefined || session.savedAt > latest.savedAt ? session : latest),
-        undefined,
-      );
+      return sessions
+        .filter(({ document }) => document.targets.length > 0)
+        .reduce<SavedSession | undefined>(
+          (latest, session) => (latest === undefined || session.savedAt > latest.savedAt ? session : latest),
+          undefined,
+        );
     },
     async saveSession(session) {
       await (await opened).put('sessions', session, session.document.id);

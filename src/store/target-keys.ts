@@ -11,10 +11,10 @@ import type { Target } from '../session/document.ts';
  */
 const KERNELS = 1;
 
-export function lightCurveKey(target: Target): string {
+export const lightCurveKey = keyOf((target) => {
   const file = target.files[0]!;
-  return stableKey({ KERNELS, sha256: file.sha256, mapping: file.mapping });
-}
+  return { KERNELS, sha256: file.sha256, mapping: file.mapping };
+});
 
 /** What preparation needs of a target besides its light curve. */
 export function preparationOf(target: Target): Omit<PrepareJob, 'jobId' | 'key' | 'lightCurve'> {
@@ -30,17 +30,25 @@ export function preparationOf(target: Target): Omit<PrepareJob, 'jobId' | 'key' 
   return { recipe: target.recipe, excluded, protectedEvents, protectedIntervals };
 }
 
-export function preparedKey(target: Target): string {
-  return stableKey({ lightCurve: lightCurveKey(target), ...preparationOf(target) });
-}
+export const preparedKey = keyOf((target) => ({ lightCurve: lightCurveKey(target), ...preparationOf(target) }));
 
 /** The settings of a target's search: its own where the analyst set them, the star's density where it is known. */
 export function searchSettingsOf(target: Target): BoxSearchSettings {
   return { ...DEFAULT_BOX_SEARCH, densityCgs: densityOf(target), ...target.search };
 }
 
-export function searchKey(target: Target): string {
-  return stableKey({ prepared: preparedKey(target), settings: searchSettingsOf(target) });
+export const searchKey = keyOf((target) => ({ prepared: preparedKey(target), settings: searchSettingsOf(target) }));
+
+/** Targets are never mutated, and the screen asks for their keys many times a second: each is hashed once. */
+function keyOf(inputsOf: (target: Target) => unknown): (target: Target) => string {
+  const known = new WeakMap<Target, string>();
+  return (target) => {
+    const before = known.get(target);
+    if (before !== undefined) return before;
+    const key = stableKey(inputsOf(target));
+    known.set(target, key);
+    return key;
+  };
 }
 
 /** Mean density in g cm^-3: as given, or from mass and radius (1.409780 g cm^-3 is the Sun's, IAU 2015 B3 with CODATA G). */
