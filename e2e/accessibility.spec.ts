@@ -43,6 +43,26 @@ for (const theme of ['dark', 'light'] as const)
       await page.keyboard.press('Escape');
       await expect(page.getByRole('dialog', { name: dialog })).toBeHidden();
     }
+    await page.keyboard.press('m');
+    await bench.drag(bench.stripPlot, [0.3, 0.5], [0.36, 0.5]);
+    await expectNothingFound(page, 'mark form');
+    await page.keyboard.press('Enter');
+    await page.keyboard.press('b');
+    await expectNothingFound(page, 'search arrangement');
+    await page.keyboard.press('b');
+    await bench.openFiles([
+      { name: 'broken.csv', mimeType: 'text/csv', buffer: Buffer.from('a,b\n1,2\n3') },
+      {
+        name: 'asked.csv',
+        mimeType: 'text/csv',
+        buffer: Buffer.from(Array.from({ length: 20 }, (_, i) => `${i * 0.02},${1 + (i % 3) * 1e-3}`).join('\n')),
+      },
+    ]);
+    await expect(page.getByRole('dialog', { name: 'Columns of asked.csv' })).toBeVisible();
+    await expectNothingFound(page, 'columns');
+    await page.keyboard.press('Escape');
+    await expect(page.getByText(/broken\.csv was not read/)).toBeVisible();
+    await expectNothingFound(page, 'unread file');
     await page.setViewportSize({ width: 1024, height: 700 });
     await expectNothingFound(page, 'narrow');
   });

@@ -95,6 +95,8 @@ export function createTargetResults(deps: {
         settings: searchSettingsOf(target),
       },
       (progress) => {
+        // A worker's last words may come after its job has ended here.
+        if (!underway.has(key)) return;
         const job = { title: 'Box search', progress, startedAt, cancel: () => cancelByHand(key) };
         results.setState({ running: withEntry(results.getState().running, key, job, 64) });
       },

@@ -54,6 +54,16 @@ describe('Candling without a screen', () => {
     expect(set.candling.actions.bench().prepared!.time.length).toBeGreaterThan(190);
   });
 
+  it('does not show a search as running because of its worker’s last words', async () => {
+    const set = await openStar();
+    set.searches[0]!.progress({ done: 1, total: 10 });
+    expect(set.candling.actions.bench().running).toBeDefined();
+    set.searches[0]!.finish();
+    await vi.waitFor(() => expect(set.candling.actions.bench().search).toBeDefined());
+    set.searches[0]!.progress({ done: 10, total: 10 });
+    expect(set.candling.actions.bench().running).toBeUndefined();
+  });
+
   it('drops the answer of a search whose recipe has changed', async () => {
     const set = await openStar();
     const target = targetOf(set);
