@@ -1,11 +1,9 @@
-import { useLayoutEffect, useRef } from 'react';
 import { foldPlot } from '../plot/fold-plot.ts';
 import type { FoldScene } from '../plot/fold-scene.ts';
 import type { FoldIntent } from '../plot/interactions/fold-gesture.ts';
 import type { DragPhase } from '../plot/interactions/strip-gesture.ts';
 import type { Figure } from '../plot/save-figure.ts';
-import { type MountedPlot, mountPlot } from '../plot/surface/mount-plot.ts';
-import './bench-plots.css';
+import { PlotHost } from './PlotHost.tsx';
 
 export interface FoldPlotProps extends FoldScene {
   readonly onEphemeris: (
@@ -22,24 +20,14 @@ export interface FoldPlotProps extends FoldScene {
 }
 
 export function FoldPlot(props: FoldPlotProps) {
-  const host = useRef<HTMLDivElement>(null);
-  const plot = useRef<MountedPlot<FoldScene, FoldIntent>>(undefined);
-  const { onFigure, emptyText, label } = props;
-  const empty = props.time.length === 0 ? emptyText : undefined;
-  useLayoutEffect(() => {
-    const mounted = mountPlot(host.current!, foldPlot());
-    plot.current = mounted;
-    return mounted.dispose;
-  }, []);
-  useLayoutEffect(() => plot.current?.show(props, (intent) => tellFold(props, intent)));
-  useLayoutEffect(() => {
-    if (plot.current) onFigure?.(plot.current.figure);
-  }, [onFigure]);
   return (
-    // biome-ignore lint/a11y/noNoninteractiveTabindex: a plot is read and worked by keys
-    <div ref={host} className="plot" role="img" tabIndex={0} aria-label={empty ? `${label} ${empty}` : label}>
-      {empty && <p className="plot-empty">{empty}</p>}
-    </div>
+    <PlotHost
+      makeSpec={foldPlot}
+      scene={props}
+      onIntent={(intent) => tellFold(props, intent)}
+      onFigure={props.onFigure}
+      emptyText={props.time.length === 0 ? props.emptyText : undefined}
+    />
   );
 }
 

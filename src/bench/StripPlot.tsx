@@ -1,10 +1,8 @@
-import { useLayoutEffect, useRef } from 'react';
 import type { DragPhase, StripIntent } from '../plot/interactions/strip-gesture.ts';
 import type { Figure } from '../plot/save-figure.ts';
 import { stripPlot } from '../plot/strip-plot.ts';
 import type { StripScene } from '../plot/strip-scene.ts';
-import { type MountedPlot, mountPlot } from '../plot/surface/mount-plot.ts';
-import './bench-plots.css';
+import { PlotHost } from './PlotHost.tsx';
 
 export interface StripPlotProps extends StripScene {
   readonly onView: (view: readonly [number, number]) => void;
@@ -21,24 +19,14 @@ export interface StripPlotProps extends StripScene {
 }
 
 export function StripPlot(props: StripPlotProps) {
-  const host = useRef<HTMLDivElement>(null);
-  const plot = useRef<MountedPlot<StripScene, StripIntent>>(undefined);
-  const { onFigure, emptyText, label } = props;
-  const empty = props.series.time.length === 0 && !props.dropped?.time.length ? emptyText : undefined;
-  useLayoutEffect(() => {
-    const mounted = mountPlot(host.current!, stripPlot());
-    plot.current = mounted;
-    return mounted.dispose;
-  }, []);
-  useLayoutEffect(() => plot.current?.show(props, (intent) => tellStrip(props, intent)));
-  useLayoutEffect(() => {
-    if (plot.current) onFigure?.(plot.current.figure);
-  }, [onFigure]);
   return (
-    // biome-ignore lint/a11y/noNoninteractiveTabindex: a plot is read and worked by keys
-    <div ref={host} className="plot" role="img" tabIndex={0} aria-label={empty ? `${label} ${empty}` : label}>
-      {empty && <p className="plot-empty">{empty}</p>}
-    </div>
+    <PlotHost
+      makeSpec={stripPlot}
+      scene={props}
+      onIntent={(intent) => tellStrip(props, intent)}
+      onFigure={props.onFigure}
+      emptyText={props.series.time.length === 0 && !props.dropped?.time.length ? props.emptyText : undefined}
+    />
   );
 }
 

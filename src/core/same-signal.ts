@@ -10,6 +10,6 @@ export function isSameSignal(
   b: Pick<Ephemeris, 'periodDays' | 'durationDays'>,
   spanDays: number,
 ): boolean {
-  const cycles = Math.max(1, spanDays / a.periodDays);
+  const cycles = Math.max(1, spanDays / Math.max(a.periodDays, b.periodDays));
   return Math.abs(a.periodDays - b.periodDays) * cycles < Math.max(a.durationDays, b.durationDays) / 2;
 }

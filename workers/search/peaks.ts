@@ -1,6 +1,7 @@
 import type { BoxPeak, SearchSeries } from '../../src/contract/search-contract.ts';
 import { type Ephemeris, phaseOf } from '../../src/core/ephemeris.ts';
 import { measureBox } from '../../src/core/measure-box.ts';
+import { isSameSignal } from '../../src/core/same-signal.ts';
 import type { Checkpoint } from '../checkpoint.ts';
 import { estimateTimingErrors } from './box-errors.ts';
 import { makeBoxWork } from './box-search.ts';
@@ -37,15 +38,16 @@ export async function findPeaks(
 ): Promise<BoxPeak[] | undefined> {
   const work = makeBoxWork(series);
   const peaks: BoxPeak[] = [];
+  const spanDays = series.time.at(-1)! - series.time[0]!;
   let rest = series;
   const candidates = localMaxima(periodogram.signalToNoise).slice(0, MOST_CANDIDATES);
   for (const [rank, trial] of candidates.entries()) {
     if (checkpoint.isDue() && !(await checkpoint.pause(rank, candidates.length))) return undefined;
     const candidate = ephemerisAt(periodogram, trial);
-    if (peaks.some((peak) => isSamePeriod(peak, candidate, series))) continue;
+    if (peaks.some((peak) => isSameSignal(peak, candidate, spanDays))) continue;
     if (peaks.length > 0 && !standsAlone(rest, candidate, periodogram.signalToNoise[trial]!)) continue;
     const refined = refineBox(series, work, candidate, reachOf(periodogram.periods, trial));
-    if (peaks.some((peak) => isSamePeriod(peak, refined, series))) continue;
+    if (peaks.some((peak) => isSameSignal(peak, refined, spanDays))) continue;
     const peak = describePeak(series, refined, periodogram.sde[trial]!);
     if (peak === undefined) continue;
     peaks.push(peak);
@@ -72,13 +74,6 @@ function ephemerisAt({ periods, epochDays, durationDays }: Periodogram, trial: n
 function reachOf(periods: Float64Array, trial: number): { from: number; to: number } {
   const own = periods[trial]!;
   return { from: periods[trial - 1] ?? own, to: periods[trial + 1] ?? own };
-}
-
-/** Whether two periods drift apart by less than half a duration over the span. */
-export function isSamePeriod(a: Ephemeris, b: Ephemeris, { time }: Pick<SearchSeries, 'time'>): boolean {
-  const span = time.at(-1)! - time[0]!;
-  const drift = (Math.abs(a.periodDays - b.periodDays) * span) / Math.max(a.periodDays, b.periodDays);
-  return drift < Math.max(a.durationDays, b.durationDays) / 2;
 }
 
 function standsAlone({ time, flux, error }: SearchSeries, candidate: Ephemeris, signalToNoise: number): boolean {
