@@ -79,14 +79,18 @@ function Origin({ one }: { readonly one: Case }) {
 }
 
 function TrialWords() {
-  const { target, ephemeris, search } = useBench();
+  const { target, ephemeris, search, failure, searchCancelled } = useBench();
   if (target === undefined) return <p className="origin">Select a target in the docket.</p>;
   if (ephemeris !== undefined) return <p className="origin small">Not a case yet. A makes it one.</p>;
   return (
     <p className="origin">
-      {search === undefined
-        ? 'The search has not finished.'
-        : 'Press P for the strongest peak, or pick a period in the periodogram.'}
+      {search !== undefined
+        ? 'Press P for the strongest peak, or pick a period in the periodogram.'
+        : failure !== undefined
+          ? 'No search of this series. Mark its dips, or set a timing by hand.'
+          : searchCancelled
+            ? 'The search was cancelled.'
+            : 'The search has not finished.'}
     </p>
   );
 }
