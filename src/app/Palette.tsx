@@ -1,6 +1,7 @@
 import { useEffect, useRef, useState } from 'react';
 import { useCandling } from '../store/use-candling.ts';
-import { type AppCommand, availableCommands } from './commands.ts';
+import type { AppCommand } from './commands/app-command.ts';
+import { availableCommands } from './commands.ts';
 import { KeyWords } from './KeyWords.tsx';
 import { matchCommands } from './match-commands.ts';
 import type { RoomActions } from './room-actions.ts';

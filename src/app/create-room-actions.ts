@@ -1,5 +1,4 @@
 import { ruleWith } from '../cases/ruling-actions.ts';
-import { shownRows } from '../docket/docket-rows.ts';
 import { chooseFiles } from '../intake/choose-files.ts';
 import { loadDemo } from '../intake/load-demo.ts';
 import { exportSession, exportVettingLog, importSession } from '../records/session-files.ts';
@@ -20,12 +19,6 @@ export function createRoomActions(candling: Candling): RoomActions {
     exportSession: () => exportSession(candling),
     exportVettingLog: (format) => exportVettingLog(candling, format),
     ruleWith: (kind) => ruleWith(candling, kind),
-    shownTargets: () =>
-      shownRows(
-        candling.document.getState().document,
-        candling.results.getState().summaries,
-        candling.view.getState().filter,
-      ).map(({ target }) => target),
   };
 }
 

@@ -1,4 +1,4 @@
-import type { AppCommand } from './commands.ts';
+import type { AppCommand } from './commands/app-command.ts';
 
 export interface Piece {
   readonly text: string;

@@ -1,4 +1,4 @@
-import type { RulingKind, Target } from '../session/document.ts';
+import type { RulingKind } from '../session/document.ts';
 
 /** What commands need of the rooms: given by the composition root, so that the list of commands imports no room. */
 export interface RoomActions {
@@ -9,6 +9,4 @@ export interface RoomActions {
   exportSession(): void;
   exportVettingLog(format: 'csv' | 'json'): void;
   ruleWith(kind: RulingKind): void;
-  /** The docket's rows in their order on the screen. */
-  shownTargets(): readonly Target[];
 }

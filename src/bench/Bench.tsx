@@ -5,6 +5,7 @@ import { FoldPane } from './FoldPane.tsx';
 import { MarkForm } from './MarkForm.tsx';
 import { useNarrow } from './narrow.ts';
 import { PeriodogramPane } from './PeriodogramPane.tsx';
+import { RoundsPane } from './RoundsPane.tsx';
 import { StripPane } from './StripPane.tsx';
 import { TargetLine } from './TargetLine.tsx';
 import './bench.css';
@@ -17,12 +18,24 @@ export function Bench({ chips }: { readonly chips: ReactNode }) {
     <main className={`bench ${arrangement}`} aria-label="Bench" data-region="bench" tabIndex={-1}>
       <TargetLine chips={chips} />
       <Notices />
-      <div className="panes">
-        <StripPane />
-        <MarkForm />
-        <FoldPane />
-        {(periodogramHidden ?? (narrow && arrangement === 'fold')) ? <PeriodogramLine /> : <PeriodogramPane />}
-      </div>
+      {arrangement === 'search' ? (
+        <div className="panes">
+          <PeriodogramPane />
+          <StripPane />
+          <MarkForm />
+          <div className="fold-row">
+            <FoldPane />
+            <RoundsPane />
+          </div>
+        </div>
+      ) : (
+        <div className="panes">
+          <StripPane />
+          <MarkForm />
+          <FoldPane />
+          {(periodogramHidden ?? narrow) ? <PeriodogramLine /> : <PeriodogramPane />}
+        </div>
+      )}
     </main>
   );
 }

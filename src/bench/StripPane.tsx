@@ -7,7 +7,8 @@ import { describeRecipe } from '../session/describe-recipe.ts';
 import { ephemerisOf } from '../store/bench-selection.ts';
 import { useBench, useCandling, useView } from '../store/use-candling.ts';
 import type { FluxView } from '../store/view-store.ts';
-import { laneOf } from './event-lanes.ts';
+import { ArrangementToggle } from './ArrangementToggle.tsx';
+import { laneOf, singlesLane } from './event-lanes.ts';
 import { fluxValues } from './flux-values.ts';
 import { OverviewPlot } from './OverviewPlot.tsx';
 import { StripPlot } from './StripPlot.tsx';
@@ -25,7 +26,7 @@ export function StripPane() {
   const { view } = useCandling();
   const { target, prepared } = useBench();
   const [cursor, setCursor] = useState<Cursor>();
-  const fluxView = useView((state) => state.fluxView);
+  const { fluxView, arrangement } = useView((state) => state);
   return (
     <section className="strip-pane" aria-label="Strip">
       <header className="pane-head">
@@ -43,6 +44,7 @@ export function StripPane() {
             </button>
           ))}
         </fieldset>
+        {arrangement === 'fold' && <ArrangementToggle />}
         <button type="button" className="recipe-words" onClick={() => view.setState({ dialog: 'recipe' })}>
           {target && describeRecipe(target.recipe)}
         </button>
@@ -106,7 +108,7 @@ function StripPlots({
   readonly onCursor: (cursor: Cursor | undefined) => void;
 }) {
   const { actions, view } = useCandling();
-  const { target, case: chosen, lightCurve } = useBench();
+  const { target, case: chosen, lightCurve, singles } = useBench();
   const { fluxView, stripSpan, trial, tool, selectedMarkId } = useView((state) => state);
   const themeKey = useThemeKey();
   const full = useMemo(() => fullSpan(prepared.time), [prepared.time]);
@@ -120,8 +122,9 @@ function StripPlots({
       return ephemeris === undefined ? [] : [laneOf(ephemeris, prepared.time, full, look)];
     });
     const look = { caseNumber: undefined, selected: true };
-    return trial === undefined || chosen !== undefined ? own : [...own, laneOf(trial, prepared.time, full, look)];
-  }, [cases, chosen, prepared, full, trial]);
+    const found = singles === undefined || singles.events.length === 0 ? own : [...own, singlesLane(singles.events)];
+    return trial === undefined || chosen !== undefined ? found : [...found, laneOf(trial, prepared.time, full, look)];
+  }, [cases, chosen, prepared, full, trial, singles]);
   const marks = (target?.marks ?? []).map(({ id, kind, interval }) => ({
     id,
     kind,

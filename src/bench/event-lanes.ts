@@ -1,3 +1,4 @@
+import type { SingleEvent } from '../contract/single-events-contract.ts';
 import { type Ephemeris, eventsWithin } from '../core/ephemeris.ts';
 import type { Interval } from '../core/interval.ts';
 import { lowerBound } from '../core/shortest-unseen-period.ts';
@@ -23,5 +24,16 @@ export function laneOf(
       ...event,
       hasData: (time[lowerBound(time, event.timeDays - half)] ?? Number.POSITIVE_INFINITY) <= event.timeDays + half,
     })),
+  };
+}
+
+/** Single dips that were found, in the order of time, in a lane of their own. */
+export function singlesLane(events: readonly SingleEvent[]): Lane {
+  const inTime = [...events].sort((a, b) => a.timeDays - b.timeDays);
+  return {
+    caseNumber: undefined,
+    selected: false,
+    durationDays: inTime[0]!.durationDays,
+    events: inTime.map(({ timeDays }, index) => ({ cycle: index + 1, timeDays, hasData: true })),
   };
 }

@@ -10,6 +10,7 @@ import { PeakTable } from './PeakTable.tsx';
 import { RulingBar } from './RulingBar.tsx';
 import { RulingForm } from './RulingForm.tsx';
 import { ruleWith } from './ruling-actions.ts';
+import { SingleEvents } from './SingleEvents.tsx';
 import { TimingSection } from './Timing.tsx';
 import './cases.css';
 
@@ -26,6 +27,7 @@ export function CaseSheet() {
         {!ruling && <NumbersSection />}
         {!ruling && <TrialActions />}
         {!ruling && <PeakTable />}
+        {!ruling && <SingleEvents />}
         {!ruling && <MarkList />}
         {!ruling && <Journal />}
       </div>
@@ -56,12 +58,7 @@ function CaseLine({ one }: { readonly one: Case }) {
 function Origin({ one }: { readonly one: Case }) {
   const { document } = useCandling();
   const { target } = useBench();
-  const words =
-    one.origin.kind === 'search'
-      ? `From box search, peak ${one.origin.rank}.`
-      : one.origin.kind === 'marks'
-        ? `From ${one.origin.markIds.length} marked ${one.origin.markIds.length === 1 ? 'dip' : 'dips'}.`
-        : 'Made by hand.';
+  const words = originWords(one.origin);
   return (
     <p className="origin small">
       {words}{' '}
@@ -76,6 +73,21 @@ function Origin({ one }: { readonly one: Case }) {
       )}
     </p>
   );
+}
+
+function originWords(origin: Case['origin']): string {
+  switch (origin.kind) {
+    case 'search':
+      return `From box search${origin.round === undefined ? '' : `, round ${origin.round}`}, peak ${origin.rank}${
+        origin.relation === undefined ? '' : `, its ${origin.relation}`
+      }.`;
+    case 'marks':
+      return `From ${origin.markIds.length} marked ${origin.markIds.length === 1 ? 'dip' : 'dips'}.`;
+    case 'single event':
+      return `From the search for single events, number ${origin.rank}.`;
+    default:
+      return 'Made by hand.';
+  }
 }
 
 function TrialWords() {
@@ -107,11 +119,11 @@ function TrialActions() {
         type="button"
         className={ephemeris === undefined ? 'button' : 'button primary'}
         disabled={ephemeris === undefined}
-        onClick={() => actions.makeCaseFromTrial()}
+        onClick={() => void actions.makeCaseFromTrial()}
       >
         <kbd>A</kbd> Make a case
       </button>
-      <button type="button" className="button" disabled={dips === 0} onClick={() => actions.makeCaseFromMarks()}>
+      <button type="button" className="button" disabled={dips === 0} onClick={() => void actions.makeCaseFromMarks()}>
         of {dips} marked {dips === 1 ? 'dip' : 'dips'}
       </button>
       <button type="button" className="button" onClick={() => view.setState({ dialog: 'timing by hand' })}>

@@ -1,5 +1,4 @@
 import { useEffect, useRef, useState } from 'react';
-import { singleTiming } from '../store/bench-actions.ts';
 import { useBench, useCandling } from '../store/use-candling.ts';
 import { HOURS_A_DAY, readHandTiming } from './hand-timing.ts';
 import { openTyped } from './typed-number.ts';
@@ -7,7 +6,7 @@ import { openTyped } from './typed-number.ts';
 /** A case from numbers that the analyst brings: a period of another source, or one event. */
 export function HandTimingDialog({ onLeave }: { readonly onLeave: () => void }) {
   const { actions } = useCandling();
-  const { target, ephemeris, prepared } = useBench();
+  const { target, ephemeris } = useBench();
   const dialog = useRef<HTMLDialogElement>(null);
   const [kind, setKind] = useState<'linear' | 'single'>('linear');
   const [period, setPeriod] = useState(ephemeris === undefined ? '' : openTyped(ephemeris.periodDays));
@@ -24,8 +23,8 @@ export function HandTimingDialog({ onLeave }: { readonly onLeave: () => void }) 
           event.preventDefault();
           if (handTiming === undefined) return;
           const { epochDays, durationDays } = handTiming;
-          actions.makeCaseByHand(
-            handTiming.kind === 'linear' ? handTiming : singleTiming(epochDays, durationDays, prepared?.time),
+          void actions.makeCaseByHand(
+            handTiming.kind === 'linear' ? handTiming : { kind: 'single', timeDays: epochDays, durationDays },
           );
           dialog.current?.close();
         }}

@@ -1,7 +1,9 @@
 import { formatNumber, formatValueWithError } from '../core/number-format.ts';
 import { describeRecipe } from '../session/describe-recipe.ts';
+import { depthLossKey } from '../store/signal-results.ts';
 import { preparedKey, searchKey } from '../store/target-keys.ts';
-import { useBench, useCandling } from '../store/use-candling.ts';
+import { useBench, useCandling, useResults } from '../store/use-candling.ts';
+import { chanceWords } from './chance-words.ts';
 import { measureAgain } from './measure-again.ts';
 
 /** What was measured of the case, on which series, and whether that series still stands. */
@@ -45,11 +47,18 @@ export function NumbersSection() {
         <span className="error number">{depth.error}</span>
         <span className="unit">{inSigma ? 'σ' : 'ppm'}</span>
         <Plain name="signal to noise" value={formatNumber(numbers?.signalToNoise, 1)} />
+        {numbers?.correlatedSignalToNoise !== undefined && (
+          <Plain name="with correlated noise" value={formatNumber(numbers.correlatedSignalToNoise, 1)} />
+        )}
         {numbers?.sde !== undefined && (
           <Plain name="signal detection efficiency" value={formatNumber(numbers.sde, 1)} />
         )}
+        {numbers?.falseAlarmProbability !== undefined && (
+          <Plain name="false-alarm probability" value={chanceWords(numbers.falseAlarmProbability)} />
+        )}
         <Plain name="events with data" value={formatNumber(numbers?.eventCount)} />
       </div>
+      <DepthKept />
       <p className="small series-words">
         <button type="button" className="link" onClick={() => view.setState({ dialog: 'recipe' })}>
           {describeRecipe(target.recipe)}
@@ -60,6 +69,32 @@ export function NumbersSection() {
         </button>
       </p>
     </section>
+  );
+}
+
+/** What the recipe leaves of such a dip, measured by injection; asked for. */
+function DepthKept() {
+  const { actions } = useCandling();
+  const { target, case: chosen, ephemeris } = useBench();
+  const loss = useResults(({ depthLosses }) =>
+    target === undefined || ephemeris === undefined ? undefined : depthLosses.get(depthLossKey(target, ephemeris)),
+  );
+  if (chosen?.numbers === undefined || !(chosen.numbers.boxDepth > 0) || target?.recipe.detrend.kind === 'none')
+    return null;
+  if (loss === undefined)
+    return (
+      <p className="small">
+        <button type="button" className="link" onClick={() => actions.measureDepthLoss()}>
+          <kbd>V</kbd> what does this recipe leave of such a dip?
+        </button>
+      </p>
+    );
+  const { keptFraction, keptFractionError, injections } = loss;
+  return (
+    <p className="small">
+      This recipe leaves {formatNumber(keptFraction * 100, 1)} ± {formatNumber(keptFractionError * 100, 1)} % of the
+      depth: {injections} injections of the same period, duration and depth at other phases.
+    </p>
   );
 }
 

@@ -2,6 +2,7 @@ import { timeTitle } from '../core/describe-time.ts';
 import type { Ephemeris, Timing } from '../core/ephemeris.ts';
 import { formatNumber, formatValueWithError } from '../core/number-format.ts';
 import { useBench, useCandling } from '../store/use-candling.ts';
+import { AliasSet } from './AliasSet.tsx';
 import { EditableValue } from './EditableValue.tsx';
 
 /** Period, epoch and duration with their errors; each is changed by typing another number. */
@@ -64,12 +65,26 @@ export function TimingSection() {
             </span>
             <span className="error" />
             <span className="unit">d</span>
+            {single.likelyPeriodDays !== undefined && (
+              <>
+                <span className="symbol">P</span>
+                <span className="name">likely period</span>
+                <span className="value number">{formatNumber(single.likelyPeriodDays, 1)}</span>
+                <span className="error number">
+                  {formatNumber(single.likelyFromDays, 1)} to {formatNumber(single.likelyToDays, 1)}
+                </span>
+                <span className="unit">d</span>
+              </>
+            )}
           </>
         )}
       </div>
+      {chosen?.timing.kind === 'alias set' && <AliasSet timing={chosen.timing} />}
       {single && (
         <p className="small quiet">
           For every longer period, no other event of it falls on these data. A shorter one may hide in the gaps.
+          {single.likelyPeriodDays !== undefined &&
+            ' The likely one: median and central 68 % from duration, density and window (Kipping 2018), on a circular orbit.'}
         </p>
       )}
     </section>

@@ -1,5 +1,4 @@
 import type { RulingKind } from '../session/document.ts';
-import { nextUnruledTarget } from '../session/selectors.ts';
 import type { Candling } from '../store/candling.ts';
 import { changeKind, openDraft } from './ruling-draft.ts';
 
@@ -25,10 +24,9 @@ export function recordRuling({ actions, document, view }: Candling): void {
 }
 
 /** Where recording leads, for the words on the button. */
-export function nextAfterRecording({ actions, document }: Candling): string | undefined {
+export function nextAfterRecording({ actions }: Candling): string | undefined {
   const { target, case: chosen } = actions.bench();
   const open = target?.cases.find((one) => one !== chosen && one.rulings.length === 0 && !one.parked);
   if (open !== undefined) return `case ${open.number}`;
-  const current = document.getState().document;
-  return current && target && nextUnruledTarget(current, target.id)?.label;
+  return actions.nextUnruledLabel();
 }

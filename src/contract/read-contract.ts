@@ -29,6 +29,13 @@ export interface StarRow {
   readonly star: StarParameters;
 }
 
+/** A span of time at which the instrument is not to be trusted. */
+export interface InstrumentSpan {
+  readonly start: number;
+  readonly end: number;
+  readonly note: string;
+}
+
 export type ReadResult =
   | {
       readonly kind: 'light curve';
@@ -46,6 +53,12 @@ export type ReadResult =
   | {
       readonly kind: 'stars';
       readonly rows: readonly StarRow[];
+      readonly sha256: string;
+      readonly warnings: readonly string[];
+    }
+  | {
+      readonly kind: 'instrument times';
+      readonly spans: readonly InstrumentSpan[];
       readonly sha256: string;
       readonly warnings: readonly string[];
     }

@@ -1,5 +1,14 @@
-import type { BoxSearchSettings } from '../core/box-search-settings.ts';
+import type { BoxSearchSettings, SearchObjective } from '../core/box-search-settings.ts';
+import type { LombScargleJob, LombScargleResult } from './lomb-scargle-contract.ts';
 import type { OnProgress, Outcome } from './outcome.ts';
+import type {
+  PeriodsFromTimesJob,
+  PeriodsFromTimesResult,
+  SingleEventsJob,
+  SingleEventsResult,
+  SinglePeriodJob,
+  SinglePeriodResult,
+} from './single-events-contract.ts';
 
 /** What a box search reads; the arrays are shared or copied once per worker and kept by `seriesId`. */
 export interface SearchSeries {
@@ -16,7 +25,7 @@ export interface BoxSearchJob {
   readonly key: string;
   readonly seriesId: string;
   readonly settings: BoxSearchSettings;
-  /** This worker searches every trial t with t mod partCount == part. */
+  /** This worker searches every block b of neighbouring trials with b mod partCount == part. */
   readonly part: number;
   readonly partCount: number;
 }
@@ -25,8 +34,8 @@ export interface BoxSearchJob {
 export interface BoxSearchPart {
   readonly key: string;
   readonly part: number;
-  /** Days. */
-  readonly periods: Float64Array;
+  /** Which trials of the plan these are. */
+  readonly trials: Int32Array;
   /** Depth S/N of the best box (Float64 to hold the objective exactly). */
   readonly power: Float64Array;
   readonly depth: Float64Array;
@@ -47,11 +56,43 @@ export interface BoxPeak {
   readonly boxDepthError: number;
   /** Box depth over its error from white noise. */
   readonly signalToNoise: number;
+  /** Box depth over its error from white and correlated noise, Pont, Zucker & Queloz (2006). */
+  readonly correlatedSignalToNoise: number;
   /** Signal detection efficiency, Kovacs, Zucker & Mazeh (2002) eq. 6. */
   readonly sde: number;
+  /** The same after the periodogram's own slow trend in period is taken out and its scatter made equal. */
+  readonly levelledEfficiency: number;
   /** Events with at least one point in the box, and points in the box. */
   readonly eventCount: number;
   readonly pointsInEvents: number;
+}
+
+/** How a peak hangs together with a stronger one. */
+export type PeakRelation =
+  | 'P/3'
+  | 'P/2'
+  | '2P'
+  | '3P'
+  | 'commensurate'
+  | 'daily alias'
+  | 'window alias'
+  | 'same events';
+
+export interface RelatedPeak extends BoxPeak {
+  readonly relation: PeakRelation;
+  /** A sentence with its numbers: why it stands under the other. */
+  readonly reason: string;
+}
+
+/** One signal: its peak, and the peaks that it makes at other periods, strongest first. */
+export interface BoxSignal extends BoxPeak {
+  readonly relatives: readonly RelatedPeak[];
+}
+
+/** Scatter of means over a duration beyond what white noise leaves, relative flux: sigma_r of Pont et al. (2006). */
+export interface CorrelatedNoise {
+  readonly durationsDays: readonly number[];
+  readonly sigma: readonly number[];
 }
 
 export interface BoxSearchResult {
@@ -65,8 +106,14 @@ export interface BoxSearchResult {
   readonly durationDays: Float64Array;
   readonly epochDays: Float64Array;
   readonly depth: Float64Array;
-  /** At most five, strongest first. */
-  readonly peaks: readonly BoxPeak[];
+  /** S/N of each trial's best box as the objective asks: the same as `signalToNoise` for white noise. */
+  readonly objective: Float64Array;
+  readonly levelledEfficiency: Float64Array;
+  readonly correlatedNoise: CorrelatedNoise;
+  /** At most five, strongest by the objective first. */
+  readonly peaks: readonly BoxSignal[];
+  /** Why another round should wait: the strongest signal looks like two stars. Undefined: nothing holds it back. */
+  readonly holdBack: string | undefined;
   readonly settings: ResolvedBoxSettings;
 }
 
@@ -78,6 +125,10 @@ export interface ResolvedBoxSettings {
   readonly trialCount: number;
   readonly durationsDays: readonly number[];
   readonly densityCgs: number | undefined;
+  readonly objective: SearchObjective;
+  /** 1 for the first search; each masked signal adds one. */
+  readonly round: number;
+  readonly maskedPoints: number;
 }
 
 export interface SummariseJob {
@@ -88,6 +139,50 @@ export interface SummariseJob {
   readonly parts: readonly BoxSearchPart[];
 }
 
+/**
+ * Searches of surrogates: this series with its blocks of time permuted, some of them inverted, so that its own
+ * correlated noise stays and every periodic dip is lost.
+ */
+export interface SurrogateJob {
+  readonly jobId: string;
+  readonly key: string;
+  readonly seriesId: string;
+  readonly settings: BoxSearchSettings;
+  readonly surrogateCount: number;
+  readonly seed: number;
+  /** This worker takes the surrogates s with s mod partCount == part. */
+  readonly part: number;
+  readonly partCount: number;
+}
+
+export interface SurrogatePart {
+  readonly key: string;
+  /** Highest objective of each surrogate of this part, over the blocks of trial periods that were searched. */
+  readonly maxima: Float64Array;
+  /** Part of the whole grid's trials that each surrogate was searched at. */
+  readonly gridFraction: number;
+  readonly blockDays: number;
+}
+
+/** Distribution of the highest noise peak of this very series, from which a peak's false-alarm probability is read. */
+export interface FalseAlarmResult {
+  readonly key: string;
+  readonly maxima: Float64Array;
+  readonly gridFraction: number;
+  readonly blockDays: number;
+  /** Generalised extreme value distribution of one surrogate's maximum over the part of the grid searched. */
+  readonly location: number;
+  readonly scale: number;
+  readonly shape: number;
+}
+
+export interface JoinSurrogatesJob {
+  readonly jobId: string;
+  readonly key: string;
+  readonly seriesId: string;
+  readonly parts: readonly SurrogatePart[];
+}
+
 export interface SearchWorker {
   /** Keeps a series under its id; at most a few are kept, the oldest is forgotten. */
   keep(series: SearchSeries): Promise<void>;
@@ -95,5 +190,12 @@ export interface SearchWorker {
   searchPart(job: BoxSearchJob, onProgress: OnProgress): Promise<Outcome<BoxSearchPart>>;
   /** Joins the parts, finds and refines the five best separate peaks. */
   summarise(job: SummariseJob): Promise<Outcome<BoxSearchResult>>;
+  searchSurrogates(job: SurrogateJob, onProgress: OnProgress): Promise<Outcome<SurrogatePart>>;
+  /** Fits the distribution of the maxima of all parts. */
+  joinSurrogates(job: JoinSurrogatesJob): Promise<Outcome<FalseAlarmResult>>;
+  lombScargle(job: LombScargleJob, onProgress: OnProgress): Promise<Outcome<LombScargleResult>>;
+  findSingleEvents(job: SingleEventsJob): Promise<Outcome<SingleEventsResult>>;
+  periodsFromTimes(job: PeriodsFromTimesJob): Promise<Outcome<PeriodsFromTimesResult>>;
+  periodOfSingle(job: SinglePeriodJob): Promise<Outcome<SinglePeriodResult>>;
   cancel(jobId: string): Promise<void>;
 }

@@ -34,6 +34,10 @@ export type Timing =
       readonly durationDays: number;
       readonly shortestPeriodDays?: number | undefined;
       readonly longestPeriodDays?: number | undefined;
+      /** Posterior of the period: its median and central 68 %. */
+      readonly likelyPeriodDays?: number | undefined;
+      readonly likelyFromDays?: number | undefined;
+      readonly likelyToDays?: number | undefined;
     }
   | { readonly kind: 'aperiodic'; readonly durationDays: number; readonly times: readonly number[] };
 

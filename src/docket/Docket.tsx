@@ -2,10 +2,11 @@ import { useVirtualizer } from '@tanstack/react-virtual';
 import { useEffect, useMemo, useRef } from 'react';
 import { formatNumber } from '../core/number-format.ts';
 import { RulingSign } from '../plot/RulingSign.tsx';
+import { type DocketRow, shownRows } from '../store/docket-rows.ts';
 import { useCandling, useDocument, useResults, useView } from '../store/use-candling.ts';
-import { type DocketRow, shownRows } from './docket-rows.ts';
+import { DocketHeads } from './DocketHeads.tsx';
+import { miniaturePoints } from './miniature-points.ts';
 import { SittingLine } from './SittingLine.tsx';
-import { smallFoldPoints } from './small-fold-path.ts';
 import './docket.css';
 
 const ROW_PX = 27;
@@ -14,8 +15,11 @@ export function Docket() {
   const candling = useCandling();
   const document = useDocument((state) => state.document);
   const summaries = useResults((state) => state.summaries);
-  const filter = useView((state) => state.filter);
-  const rows = useMemo(() => shownRows(document, summaries, filter), [document, summaries, filter]);
+  const { filter, docketOrder } = useView((state) => state);
+  const rows = useMemo(
+    () => shownRows(document, summaries, filter, docketOrder),
+    [document, summaries, filter, docketOrder],
+  );
   const total = document?.targets.length ?? 0;
   return (
     <section className="docket" aria-label="Docket" data-region="docket" tabIndex={-1}>
@@ -54,13 +58,7 @@ export function Docket() {
         <>
           <SittingLine targets={document!.targets} />
           <Unread />
-          <div className="docket-heads" aria-hidden="true">
-            <span />
-            <span>target</span>
-            <span className="wide-only">fold</span>
-            <span className="wide-only right">period / d</span>
-            <span className="right">S/N</span>
-          </div>
+          <DocketHeads />
           <Rows rows={rows} />
           {rows.length === 0 && <p className="docket-empty">No target has these words. Escape clears them.</p>}
         </>
@@ -130,7 +128,8 @@ function Row(props: {
   readonly onSelect: () => void;
 }) {
   const { row, topPx, selected, onSelect } = props;
-  const { target, standing, periodDays, signalToNoise, smallFold } = row;
+  const { target, standing, periodDays, signalToNoise, smallFold, smallStrip, failure } = row;
+  const miniature = useView((state) => state.miniature);
   const unsearched = smallFold === undefined && target.cases.length === 0;
   const number = (value: number | undefined, decimals: number) => (unsearched ? '…' : formatNumber(value, decimals));
   return (
@@ -142,6 +141,7 @@ function Row(props: {
       tabIndex={-1}
       aria-selected={selected}
       style={{ transform: `translateY(${topPx}px)` }}
+      title={failure}
       onClick={onSelect}
     >
       <RulingSign kind={standing} named />
@@ -149,7 +149,11 @@ function Row(props: {
         {target.label}
       </span>
       <span className="wide-only">
-        {standing === 'parked' ? <ParkedWords until={row.parkedUntil} /> : <SmallFold bins={smallFold} />}
+        {standing === 'parked' ? (
+          <ParkedWords until={row.parkedUntil} />
+        ) : (
+          <Miniature bins={miniature === 'fold' ? smallFold : smallStrip} />
+        )}
       </span>
       <span className="wide-only right number">
         {number(periodDays, periodDays !== undefined && periodDays < 10 ? 4 : 2)}
@@ -169,7 +173,7 @@ function ParkedWords({ until }: { readonly until: string | undefined }) {
 const FOLD_WIDTH = 64;
 const FOLD_HEIGHT = 23;
 
-function SmallFold({ bins }: { readonly bins: readonly number[] | undefined }) {
+function Miniature({ bins }: { readonly bins: readonly number[] | undefined }) {
   if (bins === undefined)
     return (
       <svg className="small-fold" viewBox={`0 0 ${FOLD_WIDTH} ${FOLD_HEIGHT}`} aria-hidden="true">
@@ -178,7 +182,7 @@ function SmallFold({ bins }: { readonly bins: readonly number[] | undefined }) {
     );
   return (
     <svg className="small-fold" viewBox={`0 0 ${FOLD_WIDTH} ${FOLD_HEIGHT}`} aria-hidden="true">
-      {smallFoldPoints(bins, FOLD_WIDTH, FOLD_HEIGHT).map(({ x, y }) => (
+      {miniaturePoints(bins, FOLD_WIDTH, FOLD_HEIGHT).map(({ x, y }) => (
         <circle key={x} cx={x} cy={y} r="1" />
       ))}
     </svg>

@@ -9,7 +9,7 @@ export interface Margins {
 }
 
 /** Width for tick labels left of every time and phase axis, so that stacked panes share their left edge. */
-export const GUTTER_PX = 58;
+export const GUTTER_PX = 66;
 export const RIGHT_PX = 12;
 
 /** Where a plot stands and how its values become CSS pixels. Immutable: a new size or zoom is a new frame. */

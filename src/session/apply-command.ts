@@ -36,6 +36,21 @@ function change(draft: Draft, command: Command, stamp: CommandStamp): void {
         for (const target of draft.targets)
           if (sameLabel(target.label, label)) Object.assign(target.star, definedOnly(star));
       return;
+    case 'set recipes':
+      for (const target of draft.targets)
+        if (command.targetIds.includes(target.id))
+          target.recipe = writable({ ...command.recipe, fluxColumn: target.recipe.fluxColumn });
+      return;
+    case 'use instrument table':
+      draft.instrumentTables = withoutId(draft.instrumentTables, command.table.id);
+      draft.instrumentTables.push(writable(command.table));
+      for (const target of draft.targets) target.instrumentTable = command.table.id;
+      return;
+    case 'use mode set':
+      draft.modeSets = withoutId(draft.modeSets, command.modeSet.id);
+      draft.modeSets.push(writable(command.modeSet));
+      for (const target of draft.targets) target.modeSet = command.modeSet.id;
+      return;
     default:
       changeTarget(draft, command, stamp);
   }
@@ -49,7 +64,7 @@ function changeTarget(draft: Draft, command: Extract<Command, { targetId: string
       draft.targets.splice(at, 1);
       return;
     case 'set recipe':
-      target.recipe = command.recipe;
+      target.recipe = writable(command.recipe);
       return;
     case 'set search':
       target.search = writable(command.search);
@@ -123,8 +138,11 @@ function addTarget(draft: Draft, target: Target): void {
   const taken = new Set(draft.targets.map(({ label }) => label));
   let label = target.label;
   for (let copy = 2; taken.has(label); copy += 1) label = `${target.label} (${copy})`;
-  draft.targets.push(writable({ ...target, label }));
+  const instrumentTable = target.instrumentTable ?? draft.instrumentTables.at(-1)?.id;
+  draft.targets.push(writable({ ...target, label, instrumentTable }));
 }
+
+const withoutId = <T extends { id: string }>(list: T[], id: string): T[] => list.filter((one) => one.id !== id);
 
 function sameLabel(a: string, b: string): boolean {
   const bare = (label: string) => label.toLowerCase().replace(/\s+/g, '');

@@ -3,7 +3,17 @@ import type { Timing } from '../core/ephemeris.ts';
 import type { Interval } from '../core/interval.ts';
 import type { StarParameters } from '../core/light-curve.ts';
 import type { Recipe } from '../core/recipe.ts';
-import type { CaseNumbers, CaseOrigin, Confidence, FileRecord, MarkKind, RulingKind, Target } from './document.ts';
+import type {
+  CaseNumbers,
+  CaseOrigin,
+  Confidence,
+  FileRecord,
+  InstrumentTable,
+  MarkKind,
+  ModeSet,
+  RulingKind,
+  Target,
+} from './document.ts';
 
 /** Who does it and when: the caller's clock and ids, so that applying a command stays pure. */
 export interface CommandStamp {
@@ -26,6 +36,11 @@ export type Command =
     }
   | { readonly kind: 'set recipe'; readonly targetId: string; readonly recipe: Recipe }
   | { readonly kind: 'set search'; readonly targetId: string; readonly search: Partial<BoxSearchSettings> }
+  /** One recipe for many targets, each keeping its own flux column. */
+  | { readonly kind: 'set recipes'; readonly targetIds: readonly string[]; readonly recipe: Recipe }
+  /** Every target of the docket uses the table from now on, also those added later. */
+  | { readonly kind: 'use instrument table'; readonly table: InstrumentTable }
+  | { readonly kind: 'use mode set'; readonly modeSet: ModeSet }
   | { readonly kind: 'remap file'; readonly targetId: string; readonly file: FileRecord; readonly star: StarParameters }
   | { readonly kind: 'add mark'; readonly targetId: string; readonly markId: string; readonly mark: MarkFields }
   | {

@@ -1,5 +1,6 @@
 import type { Command } from './commands.ts';
-import type { SessionDocument } from './document.ts';
+import { describeRecipe } from './describe-recipe.ts';
+import type { SessionDocument, Target } from './document.ts';
 import { findCase, findTarget, standingRuling } from './selectors.ts';
 
 /** What a command did, as a journal entry says it; undefined for what is not worth an entry. */
@@ -18,7 +19,13 @@ export function describeChange(document: SessionDocument, command: Command): str
     case 'set recipe':
       return 'changed the recipe';
     case 'set search':
-      return 'changed the search';
+      return describeSearchChange(findTarget(document, command.targetId)!, command.search);
+    case 'set recipes':
+      return `gave ${command.targetIds.length} targets the recipe: ${describeRecipe(command.recipe)}`;
+    case 'use instrument table':
+      return `leaves out ${command.table.spans.length} spans of ${command.table.fileName} in every target`;
+    case 'use mode set':
+      return `common modes of ${command.modeSet.stars.length} stars`;
     case 'remap file':
       return `corrected the columns of ${command.file.name}`;
     case 'add mark':
@@ -53,4 +60,14 @@ function describeCaseChange(
     case 'unpark':
       return 'took up the parked case again';
   }
+}
+
+/** Masking a signal begins another round, and is worth its own words. */
+function describeSearchChange(target: Target, next: Target['search']): string {
+  const before = target.search.masked ?? [];
+  const after = next.masked ?? [];
+  if (after.length > before.length)
+    return `masked the signal at ${Number(after.at(-1)!.periodDays.toPrecision(7))} d for round ${after.length + 1} of the search`;
+  if (after.length < before.length) return `went back to round ${after.length + 1} of the search`;
+  return 'changed the search';
 }

@@ -1,5 +1,5 @@
 import type { BoxSearchSettings } from '../core/box-search-settings.ts';
-import type { Timing } from '../core/ephemeris.ts';
+import type { Ephemeris, Timing } from '../core/ephemeris.ts';
 import type { FileMapping } from '../core/file-mapping.ts';
 import type { Interval } from '../core/interval.ts';
 import type { StarParameters, TimeReference } from '../core/light-curve.ts';
@@ -8,7 +8,7 @@ import type { Recipe } from '../core/recipe.ts';
 /** Everything an analyst decided, and what it rests on, but for the flux itself. */
 export interface SessionDocument {
   readonly format: 'candling-session';
-  readonly version: 1;
+  readonly version: 2;
   readonly id: string;
   readonly name: string;
   /** App version that wrote it. */
@@ -16,8 +16,28 @@ export interface SessionDocument {
   readonly createdAt: string;
   readonly analyst: string;
   readonly targets: readonly Target[];
+  /** Tables of times at which the instrument is not trusted; a target names the one that it uses. */
+  readonly instrumentTables: readonly InstrumentTable[];
+  /** What the docket's common modes were found from, frozen; a target names the set that it uses. */
+  readonly modeSets: readonly ModeSet[];
   /** Append-only, oldest first. */
   readonly journal: readonly JournalEntry[];
+}
+
+export interface InstrumentTable {
+  /** Hash of its spans. */
+  readonly id: string;
+  readonly fileName: string;
+  /** Whether the times are full Julian dates; otherwise they count as the light curves' own times do. */
+  readonly isJulian: boolean;
+  readonly spans: readonly { readonly start: number; readonly end: number; readonly note: string }[];
+}
+
+/** The stars that the common modes are found from, each with the events that are masked for it. */
+export interface ModeSet {
+  /** Hash of its stars. */
+  readonly id: string;
+  readonly stars: readonly { readonly targetId: string; readonly masked: readonly Ephemeris[] }[];
 }
 
 export interface FileRecord {
@@ -39,6 +59,9 @@ export interface Target {
   readonly recipe: Recipe;
   /** What the analyst set of this target's search; the rest is chosen by the search. */
   readonly search: Partial<BoxSearchSettings>;
+  /** Ids of the session's tables; undefined: none. */
+  readonly instrumentTable: string | undefined;
+  readonly modeSet: string | undefined;
   readonly marks: readonly Mark[];
   readonly cases: readonly Case[];
   /** Highest case number ever given here: numbers are not reused after a case is deleted. */
@@ -61,12 +84,23 @@ export interface CaseNumbers {
   readonly boxDepth: number;
   readonly boxDepthError: number | undefined;
   readonly signalToNoise: number | undefined;
+  /** With correlated noise in the error, Pont, Zucker & Queloz (2006). */
+  readonly correlatedSignalToNoise: number | undefined;
   readonly sde: number | undefined;
+  /** From surrogates of this very series. */
+  readonly falseAlarmProbability: number | undefined;
   readonly eventCount: number | undefined;
 }
 
 export type CaseOrigin =
-  | { readonly kind: 'search'; readonly rank: number }
+  /** Rank among the signals of a round; `relation` where a related peak was promoted ("2P"). */
+  | {
+      readonly kind: 'search';
+      readonly rank: number;
+      readonly round?: number | undefined;
+      readonly relation?: string | undefined;
+    }
+  | { readonly kind: 'single event'; readonly rank: number }
   | { readonly kind: 'marks'; readonly markIds: readonly string[] }
   | { readonly kind: 'hand' };
 

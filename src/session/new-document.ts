@@ -9,5 +9,17 @@ export function newDocument(fields: {
   readonly at: string;
 }): SessionDocument {
   const { id, name, analyst, app, at } = fields;
-  return { format: 'candling-session', version: 1, id, name, app, createdAt: at, analyst, targets: [], journal: [] };
+  return {
+    format: 'candling-session',
+    version: 2,
+    id,
+    name,
+    app,
+    createdAt: at,
+    analyst,
+    targets: [],
+    instrumentTables: [],
+    modeSets: [],
+    journal: [],
+  };
 }

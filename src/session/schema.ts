@@ -1,4 +1,5 @@
 import * as v from 'valibot';
+import { SEARCH_OBJECTIVES } from '../core/box-search-settings.ts';
 import { CONFIDENCES, MARK_KINDS, RULING_KINDS, type SessionDocument } from './document.ts';
 
 /** What a session file must hold. Keys that are not known are left out; what is known must be of its kind. */
@@ -6,6 +7,7 @@ import { CONFIDENCES, MARK_KINDS, RULING_KINDS, type SessionDocument } from './d
 const finite = v.pipe(v.number(), v.finite());
 const positive = v.pipe(v.number(), v.finite(), v.gtValue(0));
 const text = v.string();
+const count = v.pipe(v.number(), v.integer(), v.minValue(0));
 const filled = v.pipe(v.string(), v.minLength(1));
 const moment = v.pipe(v.string(), v.isoTimestamp());
 const maybe = <T extends v.GenericSchema>(schema: T) => v.optional(schema);
@@ -14,6 +16,8 @@ const interval = v.pipe(
   v.object({ start: finite, end: finite }),
   v.check(({ start, end }) => start <= end, 'expected a start before its end'),
 );
+
+const ephemeris = v.object({ periodDays: positive, epochDays: finite, durationDays: positive });
 
 const timing = v.variant('kind', [
   v.object({
@@ -43,6 +47,9 @@ const timing = v.variant('kind', [
     durationDays: positive,
     shortestPeriodDays: maybe(positive),
     longestPeriodDays: maybe(positive),
+    likelyPeriodDays: maybe(positive),
+    likelyFromDays: maybe(positive),
+    likelyToDays: maybe(positive),
   }),
   v.object({ kind: v.literal('aperiodic'), durationDays: positive, times: v.array(finite) }),
 ]);
@@ -57,7 +64,15 @@ const recipe = v.object({
   detrend: v.variant('kind', [
     v.object({ kind: v.literal('none') }),
     v.object({ kind: v.literal('biweight'), windowDays: positive }),
+    v.object({ kind: v.literal('running median'), windowDays: positive }),
+    v.object({ kind: v.literal('savitzky-golay'), windowDays: positive, degree: count }),
+    v.object({ kind: v.literal('spline'), knotDays: positive }),
+    v.object({ kind: v.literal('harmonics'), count: count }),
   ]),
+  maskFlares: v.boolean(),
+  splitAtDrops: v.boolean(),
+  covariates: maybe(v.object({ names: v.array(text), per: v.picklist(['series', 'segment', 'night']) })),
+  commonModes: count,
   protectCases: v.boolean(),
 });
 
@@ -66,7 +81,9 @@ const numbers = v.object({
   boxDepth: finite,
   boxDepthError: maybe(finite),
   signalToNoise: maybe(finite),
+  correlatedSignalToNoise: maybe(finite),
   sde: maybe(finite),
+  falseAlarmProbability: maybe(finite),
   eventCount: maybe(finite),
 });
 
@@ -141,7 +158,8 @@ const oneCase = v.object({
   id: filled,
   number: v.pipe(v.number(), v.integer(), v.minValue(1)),
   origin: v.variant('kind', [
-    v.object({ kind: v.literal('search'), rank: finite }),
+    v.object({ kind: v.literal('search'), rank: finite, round: maybe(finite), relation: maybe(text) }),
+    v.object({ kind: v.literal('single event'), rank: finite }),
     v.object({ kind: v.literal('marks'), markIds: v.array(text) }),
     v.object({ kind: v.literal('hand') }),
   ]),
@@ -170,7 +188,15 @@ const target = v.object({
     oversampling: maybe(positive),
     densityCgs: maybe(positive),
     durationsDays: maybe(v.array(positive)),
+    objective: maybe(v.picklist(SEARCH_OBJECTIVES)),
+    masked: maybe(
+      v.array(
+        v.object({ ...ephemeris.entries, boxDepth: maybe(finite), signalToNoise: maybe(finite), sde: maybe(finite) }),
+      ),
+    ),
   }),
+  instrumentTable: maybe(text),
+  modeSet: maybe(text),
   marks: v.array(v.object({ id: filled, kind: v.picklist(MARK_KINDS), interval, note: text })),
   cases: v.array(oneCase),
   lastCaseNumber: v.pipe(v.number(), v.integer(), v.minValue(0)),
@@ -178,13 +204,24 @@ const target = v.object({
 
 export const sessionSchema: v.GenericSchema<unknown, SessionDocument> = v.object({
   format: v.literal('candling-session'),
-  version: v.literal(1),
+  version: v.literal(2),
   id: filled,
   name: text,
   app: text,
   createdAt: moment,
   analyst: text,
   targets: v.array(target),
+  instrumentTables: v.array(
+    v.object({
+      id: filled,
+      fileName: text,
+      isJulian: v.boolean(),
+      spans: v.array(v.object({ start: finite, end: finite, note: text })),
+    }),
+  ),
+  modeSets: v.array(
+    v.object({ id: filled, stars: v.array(v.object({ targetId: filled, masked: v.array(ephemeris) })) }),
+  ),
   journal: v.array(
     v.object({
       id: filled,

@@ -18,9 +18,8 @@ export function targetStanding(target: Pick<Target, 'cases'>): Standing {
   return standings.includes(undefined) ? undefined : standings[0];
 }
 
-/** The next target in the docket's order, after the given one and round the end, that has neither ruling nor parking. */
-export function nextUnruledTarget(document: SessionDocument, afterId: string | undefined): Target | undefined {
-  const { targets } = document;
+/** The next target of a list, after the given one and round the end, that has neither ruling nor parking. */
+export function nextUnruledTarget(targets: readonly Target[], afterId: string | undefined): Target | undefined {
   const start = targets.findIndex(({ id }) => id === afterId) + 1;
   const order = [...targets.slice(start), ...targets.slice(0, start)];
   return order.find((target) => target.id !== afterId && targetStanding(target) === undefined);

@@ -56,7 +56,9 @@ function rowOf(document: SessionDocument, target: Target, one: Case | undefined,
     box_depth_ppm: numbers && numbers.boxDepth * 1e6,
     box_depth_err_ppm: numbers?.boxDepthError === undefined ? undefined : numbers.boxDepthError * 1e6,
     signal_to_noise: numbers?.signalToNoise,
+    signal_to_noise_correlated: numbers?.correlatedSignalToNoise,
     signal_detection_efficiency: numbers?.sde,
+    false_alarm_probability: numbers?.falseAlarmProbability,
     events: numbers?.eventCount,
     recipe: describeRecipe(recipe),
     recipe_json: JSON.stringify(recipe),
@@ -80,6 +82,8 @@ function timingCells(timing: Timing | undefined): LogRow {
     period_d: linear?.periodDays,
     period_err_d: linear?.periodErrorDays,
     shortest_period_d: timing?.kind === 'single' ? timing.shortestPeriodDays : undefined,
+    likely_period_d: timing?.kind === 'single' ? timing.likelyPeriodDays : undefined,
+    alias_periods_d: timing?.kind === 'alias set' ? timing.periods.map((one) => one.periodDays).join(' ') : '',
     epoch_d: epoch,
     epoch_err_d: linear?.epochErrorDays,
     duration_h: timing && timing.durationDays * 24,
@@ -88,7 +92,11 @@ function timingCells(timing: Timing | undefined): LogRow {
 }
 
 function originWords(origin: CaseOrigin): string {
-  if (origin.kind === 'search') return `box search, peak ${origin.rank}`;
+  if (origin.kind === 'search') {
+    const round = origin.round === undefined || origin.round === 1 ? '' : `, round ${origin.round}`;
+    return `box search${round}, peak ${origin.rank}${origin.relation === undefined ? '' : `, its ${origin.relation}`}`;
+  }
+  if (origin.kind === 'single event') return `single events, number ${origin.rank}`;
   return origin.kind === 'marks' ? `${origin.markIds.length} marked dips` : 'set by hand';
 }
 

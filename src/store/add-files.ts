@@ -2,8 +2,9 @@ import type { ReadResult, StarRow } from '../contract/read-contract.ts';
 import type { FileMapping } from '../core/file-mapping.ts';
 import { DEFAULT_RECIPE } from '../core/recipe.ts';
 import type { Jobs } from '../jobs/jobs.ts';
-import type { FileRecord, Target } from '../session/document.ts';
+import type { FileRecord, InstrumentTable, Target } from '../session/document.ts';
 import type { DocumentStore } from './document-store.ts';
+import { instrumentTableOf } from './instrument-spans.ts';
 import { fileResult, type LightCurveRead, type ResultsStore } from './results-store.ts';
 import type { SessionStorage } from './session-storage.ts';
 import { lightCurveKey } from './target-keys.ts';
@@ -38,9 +39,12 @@ interface Deps {
 interface Batch {
   readonly targets: Target[];
   readonly stars: StarRow[];
+  readonly instruments: InstrumentTable[];
   readonly questions: MappingQuestion[];
   readonly unread: Unread[];
 }
+
+const emptyBatch = (): Batch => ({ targets: [], stars: [], instruments: [], questions: [], unread: [] });
 
 export function createAddFiles(deps: Deps): AddFiles {
   const { jobs, storage, document, view, results, newId } = deps;
@@ -57,6 +61,9 @@ export function createAddFiles(deps: Deps): AddFiles {
     if (read.kind === 'stars') {
       batch.stars.push(...read.rows);
       for (const sentence of read.warnings) batch.unread.push({ fileName, sentence });
+    } else if (read.kind === 'instrument times') {
+      batch.instruments.push(instrumentTableOf(fileName, read.spans));
+      for (const sentence of read.warnings) batch.unread.push({ fileName, sentence });
     } else if (read.kind === 'question') {
       batch.questions.push({ fileName, bytes, read, mapping: read.mapping, targetId: undefined });
     } else {
@@ -72,6 +79,7 @@ export function createAddFiles(deps: Deps): AddFiles {
     const { run } = document.getState();
     if (batch.targets.length > 0) run({ kind: 'add targets', targets: batch.targets });
     if (batch.stars.length > 0) run({ kind: 'describe stars', rows: batch.stars });
+    for (const table of batch.instruments) run({ kind: 'use instrument table', table });
     const { unread, mappingQuestions, targetId } = view.getState();
     view.setState({
       unread: [...unread, ...batch.unread],
@@ -81,7 +89,7 @@ export function createAddFiles(deps: Deps): AddFiles {
   }
 
   const add: AddFiles['add'] = async (files) => {
-    const batch: Batch = { targets: [], stars: [], questions: [], unread: [] };
+    const batch = emptyBatch();
     for (const file of files) {
       try {
         await readInto(batch, file.name, await file.bytes());
@@ -101,7 +109,7 @@ export function createAddFiles(deps: Deps): AddFiles {
     async answer(question, mapping, alike) {
       const waiting = view.getState().mappingQuestions;
       const answered = waiting.filter((other) => other === question || (alike && sameColumns(other, question)));
-      const batch: Batch = { targets: [], stars: [], questions: [], unread: [] };
+      const batch = emptyBatch();
       for (const { fileName, bytes, targetId } of answered) {
         await readInto(batch, fileName, bytes, mapping);
         if (targetId !== undefined) remapLast(batch, targetId);
@@ -139,6 +147,8 @@ function newTarget(id: string, name: string, bytes: number, read: LightCurveRead
     star,
     recipe: DEFAULT_RECIPE,
     search: {},
+    instrumentTable: undefined,
+    modeSet: undefined,
     marks: [],
     cases: [],
     lastCaseNumber: 0,

@@ -1,9 +1,11 @@
+import type { LombScargleResult } from '../contract/lomb-scargle-contract.ts';
 import type { PreparedSeries } from '../contract/prepare-contract.ts';
-import type { BoxSearchResult } from '../contract/search-contract.ts';
+import type { BoxSearchResult, FalseAlarmResult } from '../contract/search-contract.ts';
+import type { SingleEventsResult } from '../contract/single-events-contract.ts';
 import type { Ephemeris } from '../core/ephemeris.ts';
 import type { Case, SessionDocument, Target } from '../session/document.ts';
 import type { LightCurveRead, ResultsState, RunningJob } from './results-store.ts';
-import { lightCurveKey, preparedKey, searchKey } from './target-keys.ts';
+import { falseAlarmKey, lightCurveKey, preparedKey, searchKey, sinesKey, singlesKey } from './target-keys.ts';
 import type { ViewState } from './view-store.ts';
 
 /** Everything that belongs to what is on the screen now; results only where their key is that of the inputs shown. */
@@ -15,7 +17,12 @@ export interface BenchSelection {
   readonly lightCurve: LightCurveRead | undefined;
   readonly prepared: PreparedSeries | undefined;
   readonly search: BoxSearchResult | undefined;
+  readonly sines: LombScargleResult | undefined;
+  readonly singles: SingleEventsResult | undefined;
+  readonly falseAlarm: FalseAlarmResult | undefined;
   readonly running: RunningJob | undefined;
+  readonly runningSines: RunningJob | undefined;
+  readonly runningFalseAlarm: RunningJob | undefined;
   readonly searchKey: string | undefined;
   readonly searchCancelled: boolean;
   /** Why there is no prepared series, or no search. */
@@ -24,7 +31,7 @@ export interface BenchSelection {
 
 export function selectBench(
   document: SessionDocument | undefined,
-  view: Pick<ViewState, 'targetId' | 'caseId' | 'trial'>,
+  view: Pick<ViewState, 'targetId' | 'caseId' | 'trial' | 'aliasPeriodDays'>,
   results: ResultsState,
 ): BenchSelection {
   const target = document?.targets.find(({ id }) => id === view.targetId);
@@ -35,11 +42,16 @@ export function selectBench(
   return {
     target,
     case: chosen,
-    ephemeris: chosen === undefined ? view.trial : ephemerisOf(chosen, prepared),
+    ephemeris: chosen === undefined ? view.trial : ephemerisOf(chosen, prepared, view.aliasPeriodDays),
     lightCurve: results.lightCurves.get(keys.read),
     prepared,
     search: results.searches.get(keys.search),
     running: results.running.get(keys.search),
+    sines: results.sines.get(sinesKey(target)),
+    singles: results.singles.get(singlesKey(target)),
+    falseAlarm: results.falseAlarms.get(falseAlarmKey(target)),
+    runningSines: results.running.get(sinesKey(target)),
+    runningFalseAlarm: results.running.get(falseAlarmKey(target)),
     searchKey: keys.search,
     searchCancelled: results.cancelledKeys.has(keys.search),
     failure:
@@ -54,6 +66,11 @@ const NOTHING: BenchSelection = {
   lightCurve: undefined,
   prepared: undefined,
   search: undefined,
+  sines: undefined,
+  singles: undefined,
+  falseAlarm: undefined,
+  runningSines: undefined,
+  runningFalseAlarm: undefined,
   running: undefined,
   searchKey: undefined,
   searchCancelled: false,
@@ -64,6 +81,7 @@ const NOTHING: BenchSelection = {
 export function ephemerisOf(
   { timing }: Pick<Case, 'timing'>,
   prepared: Pick<PreparedSeries, 'spanDays'> | undefined,
+  aliasPeriodDays?: number,
 ): Ephemeris | undefined {
   const { durationDays } = timing;
   switch (timing.kind) {
@@ -72,7 +90,7 @@ export function ephemerisOf(
     case 'single':
       return { periodDays: 2 * (prepared?.spanDays ?? 1) + 1, epochDays: timing.timeDays, durationDays };
     case 'alias set':
-      return { periodDays: heaviest(timing.periods), epochDays: timing.epochDays, durationDays };
+      return { periodDays: aliasPeriodDays ?? heaviest(timing.periods), epochDays: timing.epochDays, durationDays };
     default:
       return undefined;
   }

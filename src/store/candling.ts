@@ -4,10 +4,13 @@ import { newDocument } from '../session/new-document.ts';
 import { type AddFiles, createAddFiles } from './add-files.ts';
 import { startAutosave } from './autosave.ts';
 import { type BenchActions, createBenchActions } from './bench-actions.ts';
+import { createCommonModes } from './common-modes-results.ts';
 import { createDocumentStore, type DocumentStore } from './document-store.ts';
 import { followSelection } from './follow-selection.ts';
 import { createResultsStore, type ResultsStore } from './results-store.ts';
+import { createRunOnce, type RunOnce } from './run-once.ts';
 import type { SessionStorage } from './session-storage.ts';
+import { createSignalResults, type SignalResults } from './signal-results.ts';
 import { createSweep, type Sweep } from './sweep.ts';
 import { createTargetResults, type TargetResults } from './target-results.ts';
 import { createViewStore, type ViewStore } from './view-store.ts';
@@ -21,6 +24,8 @@ export interface Candling {
   readonly actions: BenchActions;
   readonly files: AddFiles;
   readonly targetResults: TargetResults;
+  readonly signals: SignalResults;
+  readonly runs: RunOnce;
   readonly sweep: Sweep;
   readonly storage: SessionStorage;
   readonly app: string;
@@ -50,10 +55,21 @@ export function createCandling(deps: CandlingDeps): Candling {
   const document = createDocumentStore({ now, newId, app });
   const view = createViewStore();
   const results = createResultsStore();
-  const targetResults = createTargetResults({ jobs, storage, results, now: milliseconds });
+  const current = () => document.getState().document;
+  const runs = createRunOnce(results, milliseconds);
+  const commonModes = createCommonModes({ jobs, results, runs, document: current, targetResults: () => targetResults });
+  const targetResults: TargetResults = createTargetResults({
+    jobs,
+    storage,
+    results,
+    runs,
+    document: current,
+    commonModes,
+  });
+  const signals = createSignalResults({ jobs, results, runs, targetResults, document: current });
   const stops = [
     startAutosave({ document, view, results, storage, now }),
-    followSelection({ document, view, results, targetResults }),
+    followSelection({ document, view, results, runs, targetResults }),
   ];
 
   async function takeLock(sessionId: string, steal: boolean): Promise<void> {
@@ -76,11 +92,13 @@ export function createCandling(deps: CandlingDeps): Candling {
     view,
     results,
     targetResults,
+    signals,
+    runs,
     storage,
     app,
-    actions: createBenchActions({ document, view, results, newId }),
+    actions: createBenchActions({ document, view, results, signals, newId }),
     files: createAddFiles({ jobs, storage, document, view, results, newId }),
-    sweep: createSweep({ document, results, targetResults, now: milliseconds }),
+    sweep: createSweep({ document, view, results, runs, targetResults, signals, now: milliseconds }),
     openSession,
     async startSession(name) {
       const analyst = document.getState().document?.analyst ?? '';

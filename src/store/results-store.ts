@@ -1,8 +1,10 @@
 import { createStore } from 'zustand/vanilla';
+import type { LombScargleResult } from '../contract/lomb-scargle-contract.ts';
 import type { Progress } from '../contract/outcome.ts';
-import type { PreparedSeries } from '../contract/prepare-contract.ts';
+import type { CommonModes, DepthLoss, PreparedSeries } from '../contract/prepare-contract.ts';
 import type { ReadResult } from '../contract/read-contract.ts';
-import type { BoxSearchResult } from '../contract/search-contract.ts';
+import type { BoxSearchResult, FalseAlarmResult } from '../contract/search-contract.ts';
+import type { SingleEventsResult } from '../contract/single-events-contract.ts';
 
 /**
  * What was computed, filed under the key of its inputs: bounded, rebuildable, never part of the document. A result
@@ -17,9 +19,23 @@ export interface TargetSummary {
   readonly key: string;
   readonly periodDays: number | undefined;
   readonly signalToNoise: number | undefined;
+  readonly sde: number | undefined;
+  readonly eventCount: number | undefined;
+  /** Relative box depth. */
+  readonly depth: number | undefined;
+  /** What the strongest peak is ranked by: its S/N as the search's objective asks. */
+  readonly objective: number | undefined;
+  /** Of the strongest peak, from surrogates; undefined where it was not asked for. */
+  readonly falseAlarmProbability: number | undefined;
+  /** Why there is no search. */
+  readonly failure: string | undefined;
+  /** Lowest relative flux of 64 equal spans of the series (NaN where empty), for the small strip. */
+  readonly smallStrip: readonly number[];
   /** 40 binned relative fluxes around mid-event (NaN where empty), for the small fold. */
   readonly smallFold: readonly number[];
 }
+
+export type SweepKind = 'search' | 'false alarms';
 
 export interface RunningJob {
   readonly title: string;
@@ -33,6 +49,11 @@ export interface ResultsState {
   readonly lightCurves: ReadonlyMap<string, LightCurveRead>;
   readonly prepared: ReadonlyMap<string, PreparedSeries>;
   readonly searches: ReadonlyMap<string, BoxSearchResult>;
+  readonly sines: ReadonlyMap<string, LombScargleResult>;
+  readonly singles: ReadonlyMap<string, SingleEventsResult>;
+  readonly falseAlarms: ReadonlyMap<string, FalseAlarmResult>;
+  readonly modes: ReadonlyMap<string, CommonModes>;
+  readonly depthLosses: ReadonlyMap<string, DepthLoss>;
   /** A sentence for each key whose job failed. */
   readonly failures: ReadonlyMap<string, string>;
   readonly summaries: ReadonlyMap<string, TargetSummary>;
@@ -40,18 +61,35 @@ export interface ResultsState {
   readonly running: ReadonlyMap<string, RunningJob>;
   /** Keys of searches the analyst cancelled: they are not started again by themselves. */
   readonly cancelledKeys: ReadonlySet<string>;
-  readonly sweep: { readonly done: number; readonly total: number; readonly startedAt: number } | undefined;
+  readonly sweep:
+    | { readonly what: SweepKind; readonly done: number; readonly total: number; readonly startedAt: number }
+    | undefined;
 }
 
 export type ResultsStore = ReturnType<typeof createResultsStore>;
 
-const LIMITS = { lightCurves: 24, prepared: 24, searches: 48, failures: 400 } as const;
+const LIMITS = {
+  lightCurves: 24,
+  prepared: 24,
+  searches: 32,
+  sines: 12,
+  singles: 24,
+  falseAlarms: 400,
+  modes: 4,
+  depthLosses: 100,
+  failures: 400,
+} as const;
 
 export function createResultsStore() {
   return createStore<ResultsState>()(() => ({
     lightCurves: new Map(),
     prepared: new Map(),
     searches: new Map(),
+    sines: new Map(),
+    singles: new Map(),
+    falseAlarms: new Map(),
+    modes: new Map(),
+    depthLosses: new Map(),
     failures: new Map(),
     summaries: new Map(),
     running: new Map(),
@@ -79,7 +117,7 @@ export function withoutEntry<V>(map: ReadonlyMap<string, V>, key: string): Map<s
 }
 
 type BoundedName = keyof typeof LIMITS;
-type BoundedValue<N extends BoundedName> = ResultsState[N] extends ReadonlyMap<string, infer V> ? V : never;
+export type BoundedValue<N extends BoundedName> = ResultsState[N] extends ReadonlyMap<string, infer V> ? V : never;
 
 /** Files a result under its key in one of the bounded caches. */
 export function fileResult<N extends BoundedName>(

@@ -1,4 +1,6 @@
+import { DEFAULT_LOMB_SCARGLE } from '../contract/lomb-scargle-contract.ts';
 import type { PrepareJob } from '../contract/prepare-contract.ts';
+import { DEFAULT_SINGLE_EVENTS, type SingleEventsSettings } from '../contract/single-events-contract.ts';
 import { type BoxSearchSettings, DEFAULT_BOX_SEARCH } from '../core/box-search-settings.ts';
 import type { Ephemeris } from '../core/ephemeris.ts';
 import type { Interval } from '../core/interval.ts';
@@ -9,15 +11,20 @@ import type { Target } from '../session/document.ts';
  * Keys of everything computed for a target, each a hash of all its inputs. KERNELS goes into every key and is raised
  * when a kernel's numbers change, so that an old session's frozen numbers can be told from new ones.
  */
-const KERNELS = 1;
+const KERNELS = 2;
+
+/** Of the estimate of false alarms: how many surrogates, and what their random numbers start from. */
+export const SURROGATES = { surrogateCount: 200, seed: 1 } as const;
 
 export const lightCurveKey = keyOf((target) => {
   const file = target.files[0]!;
   return { KERNELS, sha256: file.sha256, mapping: file.mapping };
 });
 
-/** What preparation needs of a target besides its light curve. */
-export function preparationOf(target: Target): Omit<PrepareJob, 'jobId' | 'key' | 'lightCurve'> {
+/** What preparation needs of a target besides its light curve and what the session keeps for all targets. */
+export function preparationOf(
+  target: Target,
+): Pick<PrepareJob, 'recipe' | 'excluded' | 'protectedEvents' | 'protectedIntervals'> {
   const excluded = target.marks.filter((mark) => mark.kind === 'exclude').map((mark) => mark.interval);
   const protectedEvents: Ephemeris[] = [];
   const protectedIntervals: Interval[] = [];
@@ -30,7 +37,12 @@ export function preparationOf(target: Target): Omit<PrepareJob, 'jobId' | 'key' 
   return { recipe: target.recipe, excluded, protectedEvents, protectedIntervals };
 }
 
-export const preparedKey = keyOf((target) => ({ lightCurve: lightCurveKey(target), ...preparationOf(target) }));
+export const preparedKey = keyOf((target) => ({
+  lightCurve: lightCurveKey(target),
+  ...preparationOf(target),
+  instrumentTable: target.instrumentTable,
+  modeSet: target.recipe.commonModes > 0 ? target.modeSet : undefined,
+}));
 
 /** The settings of a target's search: its own where the analyst set them, the star's density where it is known. */
 export function searchSettingsOf(target: Target): BoxSearchSettings {
@@ -51,8 +63,21 @@ function keyOf(inputsOf: (target: Target) => unknown): (target: Target) => strin
   };
 }
 
+/** Keys of what is computed on request, each of its own inputs. */
+export const sinesKey = keyOf((target) => ({ sines: preparedKey(target), settings: DEFAULT_LOMB_SCARGLE }));
+export const singlesKey = keyOf((target) => ({ singles: preparedKey(target), settings: singleSettingsOf(target) }));
+export const falseAlarmKey = keyOf((target) => ({ falseAlarm: searchKey(target), SURROGATES }));
+
+/** Of the common modes that a target's recipe takes out. */
+export const modesKey = ({ modeSet, recipe }: Target): string => `modes ${modeSet} ${recipe.commonModes}`;
+
+/** Single events are looked for beside the signals that the search has masked. */
+export function singleSettingsOf(target: Target): SingleEventsSettings {
+  return { ...DEFAULT_SINGLE_EVENTS, densityCgs: densityOf(target), masked: target.search.masked ?? [] };
+}
+
 /** Mean density in g cm^-3: as given, or from mass and radius (1.409780 g cm^-3 is the Sun's, IAU 2015 B3 with CODATA G). */
-function densityOf(target: Target): number | undefined {
+export function densityOf(target: Target): number | undefined {
   const { densityCgs, massSolar, radiusSolar } = target.star;
   if (densityCgs !== undefined) return densityCgs;
   if (massSolar === undefined || radiusSolar === undefined) return undefined;

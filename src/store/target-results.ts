@@ -1,63 +1,44 @@
-import type { Outcome } from '../contract/outcome.ts';
-import type { PreparedSeries } from '../contract/prepare-contract.ts';
-import type { BoxSearchResult } from '../contract/search-contract.ts';
-import type { Jobs, RunningTask, TaskPriority } from '../jobs/jobs.ts';
-import type { Target } from '../session/document.ts';
-import { fileResult, type LightCurveRead, type ResultsStore, withEntry, withoutEntry } from './results-store.ts';
+import type { CommonModes, PreparedSeries } from '../contract/prepare-contract.ts';
+import type { BoxSearchResult, SearchSeries } from '../contract/search-contract.ts';
+import type { Jobs, TaskPriority } from '../jobs/jobs.ts';
+import type { SessionDocument, Target } from '../session/document.ts';
+import { instrumentSpansOf } from './instrument-spans.ts';
+import { fileResult, type LightCurveRead, type ResultsStore, type TargetSummary, withEntry } from './results-store.ts';
+import type { RunOnce } from './run-once.ts';
 import type { SessionStorage } from './session-storage.ts';
-import { summariseTarget } from './summarise-target.ts';
+import { failedSummary, summariseTarget } from './summarise-target.ts';
 import { lightCurveKey, preparationOf, preparedKey, searchKey, searchSettingsOf } from './target-keys.ts';
 
 /**
  * Brings what is computed of a target into the results store, each step once however often it is asked for. Every
  * step is filed under the key of its own inputs, so an answer that comes late can only ever be filed, never shown in
- * the place of another.
+ * the place of another. A sweep files no series, only summaries: the caches stay with what is on the screen.
  */
 export interface TargetResults {
-  lightCurve(target: Target): Promise<LightCurveRead | undefined>;
+  lightCurve(target: Target, priority?: TaskPriority): Promise<LightCurveRead | undefined>;
   prepared(target: Target, priority?: TaskPriority): Promise<PreparedSeries | undefined>;
   search(target: Target, priority?: TaskPriority): Promise<BoxSearchResult | undefined>;
   /** Searches even where the analyst cancelled before. */
   searchAgain(target: Target): void;
-  /** Cancels every running preparation and search that is not of these keys. */
-  cancelAllBut(keys: ReadonlySet<string>): void;
-  /** Cancels one running search; the target is searched again when it is next shown. */
-  cancel(key: string): void;
-  /** The analyst cancelled it: it is not started again by itself. */
-  cancelByHand(key: string): void;
 }
 
-export function createTargetResults(deps: {
-  jobs: Jobs;
-  storage: SessionStorage;
-  results: ResultsStore;
-  now: () => number;
-}): TargetResults {
-  const { jobs, storage, results, now } = deps;
-  const underway = new Map<string, Promise<unknown>>();
-  const cancels = new Map<string, () => void>();
+export interface TargetResultsDeps {
+  readonly jobs: Jobs;
+  readonly storage: SessionStorage;
+  readonly results: ResultsStore;
+  readonly runs: RunOnce;
+  readonly document: () => SessionDocument | undefined;
+  /** Undefined where they cannot be found; the reason is filed under the key. */
+  readonly commonModes: (target: Target, key: string) => Promise<CommonModes | undefined>;
+}
 
-  /** One run for each key: whoever asks while it runs waits for the same answer. */
-  function once<T>(key: string, run: () => Promise<T>): Promise<T> {
-    const waiting = underway.get(key);
-    if (waiting !== undefined) return waiting as Promise<T>;
-    const promise = run().finally(() => {
-      underway.delete(key);
-      cancels.delete(key);
-      results.setState({ running: withoutEntry(results.getState().running, key) });
-    });
-    underway.set(key, promise);
-    return promise;
-  }
+const MOST_SUMMARIES = 20_000;
 
-  async function settle<T>(key: string, task: RunningTask<T>): Promise<T | undefined> {
-    cancels.set(key, task.cancel);
-    const outcome: Outcome<T> = await task.promise;
-    if (outcome.kind === 'failed') fileResult(results, 'failures', key, outcome.error.sentence);
-    return outcome.kind === 'done' ? outcome.value : undefined;
-  }
+export function createTargetResults(deps: TargetResultsDeps): TargetResults {
+  const { jobs, storage, results, runs } = deps;
+  const { once, settle } = runs;
 
-  async function readLightCurve(target: Target, key: string): Promise<LightCurveRead | undefined> {
+  async function readLightCurve(target: Target, key: string, priority: TaskPriority) {
     const file = target.files[0]!;
     const bytes = await storage.readFile(file.sha256);
     if (bytes === undefined) {
@@ -67,87 +48,100 @@ export function createTargetResults(deps: {
     const outcome = await jobs.readFile(file.name, bytes, file.mapping);
     if (outcome.kind === 'failed') fileResult(results, 'failures', key, outcome.error.sentence);
     if (outcome.kind !== 'done' || outcome.value.kind !== 'light curve') return undefined;
-    fileResult(results, 'lightCurves', key, outcome.value);
+    if (priority !== 'sweep') fileResult(results, 'lightCurves', key, outcome.value);
     return outcome.value;
   }
 
   async function prepareTarget(target: Target, key: string, priority: TaskPriority) {
-    const read = await lightCurve(target);
+    const read = await lightCurve(target, priority);
     if (read === undefined) {
       const reason = results.getState().failures.get(lightCurveKey(target));
       if (reason !== undefined) fileResult(results, 'failures', key, reason);
       return undefined;
     }
-    const job = { key, lightCurve: read.lightCurve, ...preparationOf(target) };
-    const value = await settle(key, jobs.prepare(job, priority));
-    if (value !== undefined) fileResult(results, 'prepared', key, value);
+    const needsModes = target.recipe.commonModes > 0;
+    const commonModes = needsModes ? await deps.commonModes(target, key) : undefined;
+    if (needsModes && commonModes === undefined) return undefined;
+    const job = {
+      key,
+      lightCurve: read.lightCurve,
+      ...preparationOf(target),
+      instrumentSpans: instrumentSpansOf(target, deps.document()),
+      commonModes,
+    };
+    const value = await settle(runKey(key, priority), jobs.prepare(job, priority), key);
+    if (value !== undefined && priority !== 'sweep') fileResult(results, 'prepared', key, value);
     return value;
   }
 
   async function searchTarget(target: Target, key: string, priority: TaskPriority) {
     const series = await prepared(target, priority);
-    if (series === undefined) return undefined;
-    const startedAt = now();
+    if (series === undefined) {
+      summariseFailure(target, key, preparedKey(target));
+      return undefined;
+    }
     const task = jobs.searchBox(
-      {
-        key,
-        series: { seriesId: series.key, time: series.time, flux: series.flux, error: series.error },
-        settings: searchSettingsOf(target),
-      },
-      (progress) => {
-        // A worker's last words may come after its job has ended here.
-        if (!underway.has(key)) return;
-        const job = { title: 'Box search', progress, startedAt, cancel: () => cancelByHand(key) };
-        results.setState({ running: withEntry(results.getState().running, key, job, 64) });
-      },
+      { key, series: seriesOf(series), settings: searchSettingsOf(target) },
+      priority === 'sweep' ? () => undefined : runs.progressOf(key, 'Box search'),
       priority,
     );
-    const value = await settle(key, task);
-    if (value === undefined) return undefined;
-    fileResult(results, 'searches', key, value);
-    const summary = summariseTarget(series, value);
-    results.setState({ summaries: withEntry(results.getState().summaries, target.id, summary, 20_000) });
+    const value = await settle(runKey(key, priority), task, key);
+    if (value === undefined) summariseFailure(target, key, key);
+    else {
+      if (priority !== 'sweep') fileResult(results, 'searches', key, value);
+      summarise(target, summariseTarget(series, value));
+    }
     return value;
   }
 
-  function lightCurve(target: Target) {
+  function summarise(target: Target, summary: TargetSummary): void {
+    results.setState({ summaries: withEntry(results.getState().summaries, target.id, summary, MOST_SUMMARIES) });
+  }
+
+  /** So that the docket says why there is nothing, and a sweep does not try again what cannot be done. */
+  function summariseFailure(target: Target, key: string, failureKey: string): void {
+    const failure = results.getState().failures.get(failureKey);
+    if (failure !== undefined) summarise(target, failedSummary(key, failure));
+  }
+
+  function lightCurve(target: Target, priority: TaskPriority = 'now') {
     const key = lightCurveKey(target);
     const known = results.getState().lightCurves.get(key);
-    return known !== undefined ? Promise.resolve(known) : once(key, () => readLightCurve(target, key));
+    return known !== undefined
+      ? Promise.resolve(known)
+      : once(runKey(key, priority), () => readLightCurve(target, key, priority));
   }
 
   function prepared(target: Target, priority: TaskPriority = 'now') {
     const key = preparedKey(target);
     const known = results.getState().prepared.get(key);
-    return known !== undefined ? Promise.resolve(known) : once(key, () => prepareTarget(target, key, priority));
+    return known !== undefined
+      ? Promise.resolve(known)
+      : once(runKey(key, priority), () => prepareTarget(target, key, priority));
   }
 
   function search(target: Target, priority: TaskPriority = 'now') {
     const key = searchKey(target);
     const known = results.getState().searches.get(key);
-    return known !== undefined ? Promise.resolve(known) : once(key, () => searchTarget(target, key, priority));
-  }
-
-  function cancelByHand(key: string) {
-    results.setState({ cancelledKeys: new Set(results.getState().cancelledKeys).add(key) });
-    cancels.get(key)?.();
+    return known !== undefined
+      ? Promise.resolve(known)
+      : once(runKey(key, priority), () => searchTarget(target, key, priority));
   }
 
   return {
     lightCurve,
     prepared,
     search,
-    cancelAllBut(keys) {
-      for (const [key, cancel] of cancels) if (!keys.has(key)) cancel();
-    },
     searchAgain(target) {
-      const key = searchKey(target);
-      const cancelledKeys = new Set(results.getState().cancelledKeys);
-      cancelledKeys.delete(key);
-      results.setState({ cancelledKeys, failures: withoutEntry(results.getState().failures, key) });
+      runs.forgive(searchKey(target));
       void search(target);
     },
-    cancel: (key) => cancels.get(key)?.(),
-    cancelByHand,
   };
+}
+
+/** What a sweep computes is not filed: whoever needs it for the screen runs it for himself. */
+export const runKey = (key: string, priority: TaskPriority): string => (priority === 'sweep' ? `sweep ${key}` : key);
+
+export function seriesOf({ key, time, flux, error }: PreparedSeries): SearchSeries {
+  return { seriesId: key, time, flux, error };
 }

@@ -32,7 +32,12 @@ export function useResults<T>(select: (state: ResultsState) => T): T {
 /** Target, case, series and search that are on the screen now. */
 export function useBench(): BenchSelection {
   const document = useDocument((state) => state.document);
-  const view = useView(({ targetId, caseId, trial }) => ({ targetId, caseId, trial }));
+  const view = useView(({ targetId, caseId, trial, aliasPeriodDays }) => ({
+    targetId,
+    caseId,
+    trial,
+    aliasPeriodDays,
+  }));
   const results = useResults((state) => state);
   return useMemo(() => selectBench(document, view, results), [document, view, results]);
 }

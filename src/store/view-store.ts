@@ -43,14 +43,32 @@ export interface MarkDraft {
   readonly note: string;
 }
 
+/** What a box search is drawn as; false-alarm lines belong to the S/N. */
+export type PeriodogramValue = 'SDE' | 'levelled' | 'S/N';
+
+/** `rank` 1 is the strongest; `related` counts the peaks under a signal from 0. */
+export type TrialSource =
+  | { readonly kind: 'peak'; readonly rank: number; readonly related: number | undefined }
+  | { readonly kind: 'single event'; readonly rank: number }
+  | { readonly kind: 'sine' };
+
+export interface DocketOrder {
+  readonly by: 'docket' | 'label' | 'period' | 'S/N';
+  readonly descending: boolean;
+}
+
 export interface ViewState {
   readonly theme: Theme;
   readonly targetId: string | undefined;
   readonly caseId: string | undefined;
   /** What the fold shows while no case is selected. */
   readonly trial: Ephemeris | undefined;
-  /** Rank (1 is the strongest) of the search peak that the trial was taken from. */
-  readonly trialRank: number | undefined;
+  /** What the trial was taken from, while it is unchanged. */
+  readonly trialSource: TrialSource | undefined;
+  /** The period of an alias set that is shown; undefined: the heaviest. */
+  readonly aliasPeriodDays: number | undefined;
+  readonly periodogram: 'box' | 'sines';
+  readonly periodogramValue: PeriodogramValue;
   readonly fluxView: FluxView;
   readonly arrangement: Arrangement;
   /** Undefined shows the whole series. */
@@ -64,6 +82,9 @@ export interface ViewState {
   readonly periodogramHidden: boolean | undefined;
   readonly dialog: Dialog | undefined;
   readonly filter: string;
+  readonly docketOrder: DocketOrder;
+  /** What the docket's miniatures show. */
+  readonly miniature: 'fold' | 'strip';
   readonly rulingDraft: RulingDraft | undefined;
   /** Asked one after another. */
   readonly mappingQuestions: readonly MappingQuestion[];
@@ -85,6 +106,8 @@ export type RememberedView = Pick<
   | 'docketHidden'
   | 'sheetHidden'
   | 'periodogramHidden'
+  | 'docketOrder'
+  | 'miniature'
 >;
 
 const FRESH: ViewState = {
@@ -92,7 +115,10 @@ const FRESH: ViewState = {
   targetId: undefined,
   caseId: undefined,
   trial: undefined,
-  trialRank: undefined,
+  trialSource: undefined,
+  aliasPeriodDays: undefined,
+  periodogram: 'box',
+  periodogramValue: 'SDE',
   fluxView: 'prepared',
   arrangement: 'fold',
   stripSpan: undefined,
@@ -104,6 +130,8 @@ const FRESH: ViewState = {
   periodogramHidden: undefined,
   dialog: undefined,
   filter: '',
+  docketOrder: { by: 'docket', descending: false },
+  miniature: 'fold',
   rulingDraft: undefined,
   mappingQuestions: [],
   unread: [],
@@ -118,7 +146,7 @@ export function createViewStore(remembered: Partial<RememberedView> = {}) {
 
 export function rememberedView(view: ViewState): RememberedView {
   const { theme, targetId, caseId, trial, fluxView, arrangement, stripSpan, docketHidden, sheetHidden } = view;
-  const { periodogramHidden } = view;
+  const { periodogramHidden, docketOrder, miniature } = view;
   return {
     theme,
     targetId,
@@ -130,16 +158,24 @@ export function rememberedView(view: ViewState): RememberedView {
     docketHidden,
     sheetHidden,
     periodogramHidden,
+    docketOrder,
+    miniature,
   };
 }
 
-/** View of another target: nothing of the last one's zoom, trial or drafts stays. */
-export const FRESH_TARGET_VIEW = {
+/** View of another case, or of a trial: nothing that belonged to the last one stays. */
+export const FRESH_CASE_VIEW = {
   caseId: undefined,
   trial: undefined,
-  trialRank: undefined,
+  trialSource: undefined,
+  aliasPeriodDays: undefined,
+  rulingDraft: undefined,
+} as const satisfies Partial<ViewState>;
+
+/** View of another target: nothing of the last one's zoom, trial or drafts stays. */
+export const FRESH_TARGET_VIEW = {
+  ...FRESH_CASE_VIEW,
   stripSpan: undefined,
   markDraft: undefined,
   selectedMarkId: undefined,
-  rulingDraft: undefined,
 } as const satisfies Partial<ViewState>;

@@ -2,7 +2,7 @@ import { mkdtemp, rm } from 'node:fs/promises';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { pathToFileURL } from 'node:url';
-import { build } from 'vite';
+import { build, loadConfigFromFile } from 'vite';
 
 /**
  * Bundles TypeScript modules as the app's build does and imports the result, so that what is timed is what ships.
@@ -10,10 +10,12 @@ import { build } from 'vite';
  */
 export async function bundleModules(entries) {
   const outDir = await mkdtemp(join(tmpdir(), 'candling-bench-'));
+  const { config } = await loadConfigFromFile({ command: 'build', mode: 'production' });
   try {
     await build({
       configFile: false,
       logLevel: 'error',
+      plugins: config.plugins,
       build: { outDir, minify: false, ssr: true, target: 'es2023', rollupOptions: { input: entries } },
     });
     const loaded = {};

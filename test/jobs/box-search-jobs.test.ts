@@ -9,6 +9,8 @@ import { createWorkerPool } from '../../src/jobs/worker-pool.ts';
 const series = { seriesId: 's', time: new Float64Array(3), flux: new Float64Array(3), error: new Float64Array(3) };
 const request = { key: 'k', series, settings: DEFAULT_BOX_SEARCH };
 
+const notUsed = async () => failed('not used here');
+
 function poolOf(searchPart: SearchWorker['searchPart'], log: string[] = []) {
   return createWorkerPool<SearchWorker>({
     size: 3,
@@ -28,6 +30,12 @@ function poolOf(searchPart: SearchWorker['searchPart'], log: string[] = []) {
             peaks: [],
             periods: new Float64Array(parts.map(({ part }) => part)),
           } as unknown as BoxSearchResult),
+        searchSurrogates: notUsed,
+        joinSurrogates: notUsed,
+        lombScargle: notUsed,
+        findSingleEvents: notUsed,
+        periodsFromTimes: notUsed,
+        periodOfSingle: notUsed,
         cancel: async (jobId) => {
           log.push(`cancel ${jobId}`);
         },

@@ -2,6 +2,7 @@ import fc from 'fast-check';
 import { DEFAULT_RECIPE } from '../../src/core/recipe.ts';
 import type { Command, CommandStamp } from '../../src/session/commands.ts';
 import {
+  type CaseNumbers,
   type FileRecord,
   MARK_KINDS,
   RULING_KINDS,
@@ -60,9 +61,25 @@ export function targetOf(number: number): Target {
     star: {},
     recipe: DEFAULT_RECIPE,
     search: {},
+    instrumentTable: undefined,
+    modeSet: undefined,
     marks: [],
     cases: [],
     lastCaseNumber: 0,
+  };
+}
+
+export function numbersOf(given: Partial<CaseNumbers>): CaseNumbers {
+  return {
+    key: 'k',
+    boxDepth: 0.01,
+    boxDepthError: 0.001,
+    signalToNoise: undefined,
+    correlatedSignalToNoise: undefined,
+    sde: undefined,
+    falseAlarmProbability: undefined,
+    eventCount: undefined,
+    ...given,
   };
 }
 

@@ -62,7 +62,7 @@ describe('session files', () => {
 
   it('of a newer version are named so', () =>
     expect(refusal({ ...sample(), version: 3 })).toContain(
-      'newer Candling (session format 3); this one reads up to 1',
+      'newer Candling (session format 3); this one reads up to 2',
     ));
 
   it.each([
@@ -101,6 +101,27 @@ describe('session files', () => {
         expect(readSession(text, 'x').kind).toBe('refused');
       }),
     );
+  });
+
+  it('of version 1 open with the recipe they were prepared by', () => {
+    const old: Loose = sample();
+    old.version = 1;
+    delete old.instrumentTables;
+    delete old.modeSets;
+    for (const target of old.targets) {
+      const { fluxColumn, qualityMask, clip, detrend, protectCases } = target.recipe;
+      target.recipe = { fluxColumn, qualityMask, clip, detrend, protectCases };
+    }
+    const read = readSession(JSON.stringify(old), 'old.candling.json');
+    expect(read.kind === 'read' && read.document).toMatchObject({
+      version: 2,
+      instrumentTables: [],
+      modeSets: [],
+      targets: [
+        { recipe: { maskFlares: false, splitAtDrops: false, commonModes: 0, detrend: { kind: 'biweight' } } },
+        { recipe: { maskFlares: false } },
+      ],
+    });
   });
 
   it('are brought up step by step by upgraders', () => {

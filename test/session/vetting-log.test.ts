@@ -2,7 +2,7 @@ import { describe, expect, it } from 'vitest';
 import type { Command } from '../../src/session/commands.ts';
 import * as history from '../../src/session/history.ts';
 import { vettingLogRows, writeVettingLogCsv, writeVettingLogJson } from '../../src/session/vetting-log.ts';
-import { emptySession, stampFrom, targetOf } from './session-arbitrary.ts';
+import { emptySession, numbersOf, stampFrom, targetOf } from './session-arbitrary.ts';
 
 const STAMP = { at: '2026-12-01T09:00:00.000Z', app: '0.1.0' };
 const TIMING = {
@@ -23,7 +23,7 @@ function session(note: string, reasons: readonly string[] = ['flat-bottomed dip'
       caseId: 'c',
       origin: { kind: 'search', rank: 1 },
       timing: TIMING,
-      numbers: { key: 'k', boxDepth: 0.001, boxDepthError: 5e-5, signalToNoise: 20, sde: 9, eventCount: 11 },
+      numbers: numbersOf({ boxDepth: 0.001, boxDepthError: 5e-5, signalToNoise: 20, sde: 9, eventCount: 11 }),
     },
     {
       kind: 'rule',

@@ -42,10 +42,19 @@ export function createFakeJobs(): { jobs: Jobs; searches: HeldSearch[] } {
       };
       return { promise, cancel };
     },
+    searchSurrogates: notUsed,
+    lombScargle: notUsed,
+    findSingleEvents: notUsed,
+    periodsFromTimes: notUsed,
+    periodOfSingle: notUsed,
+    findCommonModes: notUsed,
+    measureDepthLoss: notUsed,
     dispose: () => undefined,
   };
   return { jobs, searches };
 }
+
+const notUsed = (): RunningTask<never> => ({ promise: Promise.resolve(cancelled), cancel: () => undefined });
 
 function emptyResult(key: string): BoxSearchResult {
   const none = new Float64Array();
@@ -57,6 +66,10 @@ function emptyResult(key: string): BoxSearchResult {
     durationDays: none,
     epochDays: none,
     depth: none,
+    objective: none,
+    levelledEfficiency: none,
+    correlatedNoise: { durationsDays: [], sigma: [] },
+    holdBack: undefined,
     peaks: [],
     settings: {
       shortestPeriodDays: 1,
@@ -65,6 +78,9 @@ function emptyResult(key: string): BoxSearchResult {
       trialCount: 0,
       durationsDays: [],
       densityCgs: undefined,
+      objective: 'white noise S/N',
+      round: 1,
+      maskedPoints: 0,
     },
   };
 }

@@ -5,6 +5,7 @@ import { guessMapping } from './column-roles.ts';
 import { summarise } from './column-values.ts';
 import { latin1 } from './fits-header.ts';
 import { readFitsTable } from './fits-table.ts';
+import { readInstrumentTimes } from './instrument-table.ts';
 import { type RawColumn, type RawTable, Unreadable } from './raw-table.ts';
 import { readStars } from './stars-table.ts';
 import { readTextTable } from './text-table.ts';
@@ -38,6 +39,9 @@ function understand(
   if (file.mapping === undefined && guess.question !== undefined) {
     const rows = readStars(table);
     if (rows !== undefined) return { kind: 'stars', rows, sha256, warnings: table.warnings };
+    const instrument = readInstrumentTimes(table);
+    if (instrument !== undefined)
+      return { kind: 'instrument times', sha256, ...describeSpans(instrument, table, fileName) };
     if (table.columns.length < 2)
       throw new Unreadable(`${fileName} was not read. It has one column; time and flux need two.`);
     return { kind: 'question', format, sentence: guess.question, mapping: guess.mapping, columns, sha256, label };
@@ -49,6 +53,23 @@ function understand(
   const warnings = [...table.warnings, ...guessed, ...built.warnings];
   const { lightCurve } = built;
   return { kind: 'light curve', format, lightCurve, mapping, columns, sha256, label, star: table.facts.star, warnings };
+}
+
+function describeSpans(
+  { spans, leftOut }: NonNullable<ReturnType<typeof readInstrumentTimes>>,
+  table: RawTable,
+  fileName: string,
+) {
+  if (spans.length === 0)
+    throw new Unreadable(
+      `${fileName} was not read. None of its rows has a start and a later end of a time of the instrument.`,
+    );
+  const rows = leftOut === 1 ? '1 row' : `${leftOut} rows`;
+  const left =
+    leftOut === 0
+      ? []
+      : [`${fileName}: ${rows} without a start and a later end ${leftOut === 1 ? 'was' : 'were'} left out.`];
+  return { spans, warnings: [...table.warnings, ...left] };
 }
 
 const MAGIC: readonly { readonly bytes: readonly number[]; readonly name: string }[] = [

@@ -1,6 +1,5 @@
 import type { SearchSeries } from '../../src/contract/search-contract.ts';
 import { cycleOf, type Ephemeris } from '../../src/core/ephemeris.ts';
-import { median } from '../../src/core/robust-statistics.ts';
 import { findEdgeGaps, findPeriodGap } from './box-gaps.ts';
 
 /** Least ingress over duration, as nothing is known of it: a companion of a tenth of the star's radius, centrally. */
@@ -25,14 +24,16 @@ export interface TimingErrors {
  * least-squares line, and again what the sampling leaves open. A box of one event leaves the period unknown: the error is then the period itself.
  * The combination is our own; `test/search/peak-errors.test.ts` holds it against simulated scatter.
  */
-export function estimateTimingErrors(series: SearchSeries, ephemeris: Ephemeris, signalToNoise: number): TimingErrors {
+export function estimateTimingErrors(
+  series: Pick<SearchSeries, 'time'>,
+  ephemeris: Ephemeris,
+  signalToNoise: number,
+  cadenceDays: number,
+): TimingErrors {
   const { periodDays, epochDays, durationDays } = ephemeris;
   const { leading, trailing } = findEdgeGaps(series, ephemeris);
   const sampling = ((leading[1] - leading[0]) ** 2 + (trailing[1] - trailing[0]) ** 2) / 48;
-  const tau = Math.min(durationDays / 2, Math.hypot(INGRESS_FRACTION * durationDays, cadenceOf(series.time)));
-  const ingress = (durationDays * tau) / (2 * signalToNoise ** 2);
-  const sliding = (STEP_PLACE_VARIANCE / 2) * (durationDays / signalToNoise ** 2) ** 2;
-  const epochErrorDays = Math.sqrt(ingress + sliding + sampling);
+  const epochErrorDays = Math.sqrt(noiseVariance(durationDays, signalToNoise, cadenceDays) + sampling);
   const cycles = describeCycles(series.time, ephemeris);
   const [down, up] = findPeriodGap(series, ephemeris);
   const periodError = Math.hypot(epochErrorDays / cycles.deviation, (up - down) / Math.sqrt(12));
@@ -43,7 +44,26 @@ export function estimateTimingErrors(series: SearchSeries, ephemeris: Ephemeris,
   };
 }
 
-const cadenceOf = (time: Float64Array): number => median(time.subarray(1).map((value, i) => value - time[i]!));
+/** Of the epoch, from white noise alone: the first two terms above. */
+function noiseVariance(durationDays: number, signalToNoise: number, cadenceDays: number): number {
+  const tau = Math.min(durationDays / 2, Math.hypot(INGRESS_FRACTION * durationDays, cadenceDays));
+  const ingress = (durationDays * tau) / (2 * signalToNoise ** 2);
+  return ingress + (STEP_PLACE_VARIANCE / 2) * (durationDays / signalToNoise ** 2) ** 2;
+}
+
+/**
+ * The same without a look at the points: for peaks that are only listed. Edges are taken to lie anywhere in a cadence,
+ * and the events to be spread evenly over the span.
+ */
+export function roughTimingErrors(
+  { periodDays, epochDays, durationDays }: Ephemeris,
+  signalToNoise: number,
+  { cadenceDays, spanDays }: { readonly cadenceDays: number; readonly spanDays: number },
+): TimingErrors {
+  const epochErrorDays = Math.sqrt(noiseVariance(durationDays, signalToNoise, cadenceDays) + cadenceDays ** 2 / 24);
+  const deviation = spanDays / periodDays / Math.sqrt(12);
+  return { epochDays, epochErrorDays, periodErrorDays: Math.min(periodDays, epochErrorDays / deviation) };
+}
 
 /** Mean and population standard deviation of the cycle numbers of the points inside events. */
 function describeCycles(time: Float64Array, ephemeris: Ephemeris): { mean: number; deviation: number } {

@@ -1,61 +1,102 @@
-import type { BoxPeak, SearchSeries } from '../../src/contract/search-contract.ts';
-import { type Ephemeris, phaseOf } from '../../src/core/ephemeris.ts';
-import { measureBox } from '../../src/core/measure-box.ts';
+import type {
+  BoxPeak,
+  BoxSignal,
+  CorrelatedNoise,
+  RelatedPeak,
+  SearchSeries,
+} from '../../src/contract/search-contract.ts';
+import { correlatedSigmaAt, correlatedSignalToNoise } from '../../src/core/correlated-noise.ts';
+import type { Ephemeris } from '../../src/core/ephemeris.ts';
+import { median } from '../../src/core/robust-statistics.ts';
 import { isSameSignal } from '../../src/core/same-signal.ts';
 import type { Checkpoint } from '../checkpoint.ts';
-import { estimateTimingErrors } from './box-errors.ts';
-import { makeBoxWork } from './box-search.ts';
+import { estimateTimingErrors, roughTimingErrors, type TimingErrors } from './box-errors.ts';
+import type { BoxWork } from './box-search.ts';
+import { maskWork, measureEvents } from './event-sums.ts';
+import { MASK_HALF_WIDTH } from './mask-signals.ts';
+import { relatePeriods, type Sampling } from './peak-relation.ts';
 import { refineBox } from './refine-box.ts';
+import { windowFrequencies } from './window-frequencies.ts';
 
-const MOST_PEAKS = 5;
-/** Candidates held against the peaks already found; a strong signal has hundreds of shoulders and harmonics. */
+const MOST_SIGNALS = 5;
+const MOST_RELATIVES = 8;
+/** Candidates held against the signals already found; a strong one has hundreds of shoulders and harmonics. */
 const MOST_CANDIDATES = 1500;
-/** A candidate that loses more than this part of its S/N without the points of stronger peaks is their echo. */
+/** A candidate that loses more than this part of its S/N without the points of a stronger signal is its relative. */
 const LEAST_OWN_SIGNAL = 0.5;
-/** Half-width, in durations, of what is taken out around an event. */
-const MASK_HALF_WIDTH = 0.75;
+/** A relative under this part of its signal's S/N is not worth a line. */
+const LEAST_RELATIVE = 0.2;
 
 /** The joined periodogram, ascending in period. */
 export interface Periodogram {
   readonly periods: Float64Array;
   readonly signalToNoise: Float64Array;
+  readonly objective: Float64Array;
   readonly durationDays: Float64Array;
   readonly epochDays: Float64Array;
   readonly sde: Float64Array;
+  readonly levelledEfficiency: Float64Array;
+}
+
+interface Found {
+  readonly peak: BoxPeak;
+  readonly relatives: RelatedPeak[];
+  /** The series without this signal's events; made when first needed. */
+  rest: BoxWork | undefined;
+}
+
+interface Hunt {
+  readonly series: SearchSeries;
+  readonly work: BoxWork;
+  readonly periodogram: Periodogram;
+  readonly noise: CorrelatedNoise;
+  readonly sampling: Sampling;
+  readonly found: Found[];
+  /** The series without the events of every signal found. */
+  rest: BoxWork;
+  readonly cadenceDays: number;
 }
 
 /**
- * The five strongest separate peaks, refined, strongest first. Two are the same signal when they drift apart by less
- * than half a duration over the span, or when the weaker lives on the stronger one's events (shoulders, harmonics and
- * other commensurate periods): without those points it falls below half of its S/N.
+ * The five strongest separate signals, refined, strongest by the objective first, each with the peaks that it makes
+ * at other periods. Peaks of one signal drift apart by less than half a duration over the span; a peak that loses
+ * half of its S/N without the points of a stronger signal lives on those events and stands under it, as its harmonic,
+ * as its alias in the spectral window, or only as what it is: a chance alignment with the same events.
  *
  * @returns undefined when cancelled
  */
-export async function findPeaks(
+export async function findSignals(
   series: SearchSeries,
+  work: BoxWork,
   periodogram: Periodogram,
+  noise: CorrelatedNoise,
   checkpoint: Checkpoint,
-): Promise<BoxPeak[] | undefined> {
-  const work = makeBoxWork(series);
-  const peaks: BoxPeak[] = [];
-  const spanDays = series.time.at(-1)! - series.time[0]!;
-  let rest = series;
-  const candidates = localMaxima(periodogram.signalToNoise).slice(0, MOST_CANDIDATES);
+): Promise<BoxSignal[] | undefined> {
+  const sampling = {
+    spanDays: series.time.at(-1)! - series.time[0]!,
+    windowFrequencies: windowFrequencies(series.time),
+  };
+  const hunt: Hunt = {
+    series,
+    work,
+    periodogram,
+    noise,
+    sampling,
+    found: [],
+    rest: work,
+    cadenceDays: medianStep(series.time),
+  };
+  const candidates = localMaxima(periodogram.objective).slice(0, MOST_CANDIDATES);
   for (const [rank, trial] of candidates.entries()) {
     if (checkpoint.isDue() && !(await checkpoint.pause(rank, candidates.length))) return undefined;
-    const candidate = ephemerisAt(periodogram, trial);
-    if (peaks.some((peak) => isSameSignal(peak, candidate, spanDays))) continue;
-    if (peaks.length > 0 && !standsAlone(rest, candidate, periodogram.signalToNoise[trial]!)) continue;
-    const refined = refineBox(series, work, candidate, reachOf(periodogram.periods, trial));
-    if (peaks.some((peak) => isSameSignal(peak, refined, spanDays))) continue;
-    const peak = describePeak(series, refined, periodogram.sde[trial]!);
-    if (peak === undefined) continue;
-    peaks.push(peak);
-    if (peaks.length === MOST_PEAKS) break;
-    rest = withoutEvents(rest, peak);
+    consider(hunt, trial);
   }
-  return peaks.sort((a, b) => b.signalToNoise - a.signalToNoise);
+  const rankOf = ({ signalToNoise, correlatedSignalToNoise: correlated }: BoxPeak): number =>
+    periodogram.objective === periodogram.signalToNoise ? signalToNoise : correlated;
+  return hunt.found.map(({ peak, relatives }) => ({ ...peak, relatives })).sort((a, b) => rankOf(b) - rankOf(a));
 }
+
+const medianStep = (time: Float64Array): number => median(time.subarray(1).map((value, i) => value - time[i]!));
 
 /** Trials that no neighbour exceeds, strongest first. */
 function localMaxima(power: Float64Array): number[] {
@@ -67,6 +108,63 @@ function localMaxima(power: Float64Array): number[] {
   return found.sort((a, b) => power[b]! - power[a]!);
 }
 
+function consider(hunt: Hunt, trial: number): void {
+  const { found, periodogram, sampling } = hunt;
+  const candidate = ephemerisAt(periodogram, trial);
+  if (isKnown(hunt, candidate)) return;
+  if (found.length > 0 && keptPart(hunt.rest, candidate, periodogram.signalToNoise[trial]!) < LEAST_OWN_SIGNAL) {
+    addRelative(hunt, trial, candidate);
+    return;
+  }
+  if (found.length === MOST_SIGNALS) return;
+  const refined = refineBox(hunt.series, hunt.work, candidate, reachOf(periodogram.periods, trial));
+  if (found.some(({ peak }) => isSameSignal(peak, refined, sampling.spanDays))) return;
+  const peak = describePeak(hunt, refined, trial, (signalToNoise) =>
+    estimateTimingErrors(hunt.series, refined, signalToNoise, hunt.cadenceDays),
+  );
+  if (peak === undefined) return;
+  hunt.rest = maskWork(hunt.rest, [peak], MASK_HALF_WIDTH);
+  found.push({ peak, relatives: [], rest: found.length === 0 ? hunt.rest : undefined });
+}
+
+function isKnown({ found, sampling }: Hunt, candidate: Ephemeris): boolean {
+  const { spanDays } = sampling;
+  return found.some(
+    ({ peak, relatives }) =>
+      isSameSignal(peak, candidate, spanDays) || relatives.some((other) => isSameSignal(other, candidate, spanDays)),
+  );
+}
+
+/** Under the signal whose points it needs most. */
+function addRelative(hunt: Hunt, trial: number, candidate: Ephemeris): void {
+  const { found, periodogram, sampling } = hunt;
+  const signalToNoise = periodogram.signalToNoise[trial]!;
+  const open = found.filter(
+    ({ peak, relatives }) => relatives.length < MOST_RELATIVES && signalToNoise >= LEAST_RELATIVE * peak.signalToNoise,
+  );
+  if (open.length === 0) return;
+  const shares = found.map((one) => keptPart(restOf(hunt, one), candidate, signalToNoise));
+  const owner = found[shares.indexOf(Math.min(...shares))]!;
+  if (!open.includes(owner)) return;
+  const { cadenceDays } = hunt;
+  const peak = describePeak(hunt, candidate, trial, (own) =>
+    roughTimingErrors(candidate, own, { cadenceDays, spanDays: sampling.spanDays }),
+  );
+  if (peak === undefined) return;
+  const lost = `Without the events of ${Number(owner.peak.periodDays.toPrecision(6))} d its S/N falls from ${peak.signalToNoise.toFixed(1)} to ${(Math.max(0, Math.min(...shares)) * signalToNoise).toFixed(1)}.`;
+  const related = relatePeriods(owner.peak, candidate, sampling);
+  owner.relatives.push({
+    ...peak,
+    relation: related?.relation ?? 'same events',
+    reason: related === undefined ? lost : `${related.reason} ${lost}`,
+  });
+}
+
+function restOf({ work }: Hunt, one: Found): BoxWork {
+  one.rest ??= maskWork(work, [one.peak], MASK_HALF_WIDTH);
+  return one.rest;
+}
+
 function ephemerisAt({ periods, epochDays, durationDays }: Periodogram, trial: number): Ephemeris {
   return { periodDays: periods[trial]!, epochDays: epochDays[trial]!, durationDays: durationDays[trial]! };
 }
@@ -76,29 +174,31 @@ function reachOf(periods: Float64Array, trial: number): { from: number; to: numb
   return { from: periods[trial - 1] ?? own, to: periods[trial + 1] ?? own };
 }
 
-function standsAlone({ time, flux, error }: SearchSeries, candidate: Ephemeris, signalToNoise: number): boolean {
-  const own = measureBox(time, flux, error, candidate);
-  return own !== undefined && own.signalToNoise >= LEAST_OWN_SIGNAL * signalToNoise;
+/** The part of a candidate's S/N that a thinned series keeps. */
+function keptPart(work: BoxWork, candidate: Ephemeris, signalToNoise: number): number {
+  return (measureEvents(work, candidate)?.signalToNoise ?? 0) / signalToNoise;
 }
 
-function withoutEvents(series: SearchSeries, { periodDays, epochDays, durationDays }: Ephemeris): SearchSeries {
-  const reach = (MASK_HALF_WIDTH * durationDays) / periodDays;
-  const keep = series.time.map((time) => (Math.abs(phaseOf(time, periodDays, epochDays)) > reach ? 1 : 0));
-  const pick = (values: Float64Array): Float64Array => values.filter((_, i) => keep[i] === 1);
-  return { ...series, time: pick(series.time), flux: pick(series.flux), error: pick(series.error) };
-}
-
-function describePeak(series: SearchSeries, ephemeris: Ephemeris, sde: number): BoxPeak | undefined {
-  const measure = measureBox(series.time, series.flux, series.error, ephemeris);
+function describePeak(
+  { work, periodogram, noise }: Hunt,
+  ephemeris: Ephemeris,
+  trial: number,
+  errorsOf: (signalToNoise: number) => TimingErrors,
+): BoxPeak | undefined {
+  const measure = measureEvents(work, ephemeris);
   if (measure === undefined || !(measure.signalToNoise > 0)) return undefined;
+  const { depth, depthError, signalToNoise, eventCount } = measure;
+  const sigma = correlatedSigmaAt(noise, ephemeris.durationDays);
   return {
     ...ephemeris,
-    ...estimateTimingErrors(series, ephemeris, measure.signalToNoise),
-    boxDepth: measure.depth,
-    boxDepthError: measure.depthError,
-    signalToNoise: measure.signalToNoise,
-    sde,
-    eventCount: measure.eventCount,
+    ...errorsOf(signalToNoise),
+    boxDepth: depth,
+    boxDepthError: depthError,
+    signalToNoise,
+    correlatedSignalToNoise: correlatedSignalToNoise(depth, depthError, sigma, eventCount),
+    sde: periodogram.sde[trial]!,
+    levelledEfficiency: periodogram.levelledEfficiency[trial]!,
+    eventCount,
     pointsInEvents: measure.pointsInside,
   };
 }

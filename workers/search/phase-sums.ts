@@ -1,6 +1,7 @@
 /** Cells of the time lookup in a median cadence: the finer, the seldomer a search has to step on. */
 const CELLS_PER_CADENCE = 4;
 const MOST_CELLS_PER_POINT = 16;
+const MOST_STEPS_SAMPLED = 500;
 /** One looked-up edge costs about this part of a scattered point. */
 const EDGE_COST = 0.7;
 /**
@@ -40,8 +41,7 @@ export function makePhaseSums(time: Float64Array, weight: Float64Array, weighted
 
 function makeLookup(elapsed: Float64Array, n: number): Pick<PhaseSums, 'lookup' | 'cellsPerDay'> {
   const span = elapsed[n - 1] ?? 0;
-  const steps = elapsed.subarray(1, n).map((value, i) => value - elapsed[i]!);
-  const cadence = steps.sort()[steps.length >> 1] ?? 0;
+  const cadence = typicalStep(elapsed, n);
   const wanted = cadence > 0 ? (CELLS_PER_CADENCE * span) / cadence : 1;
   const cells = Math.max(1, Math.ceil(Math.min(wanted, MOST_CELLS_PER_POINT * n)));
   const cellsPerDay = span > 0 ? cells / span : 0;
@@ -52,6 +52,14 @@ function makeLookup(elapsed: Float64Array, n: number): Pick<PhaseSums, 'lookup' 
     lookup[cell] = i;
   }
   return { lookup, cellsPerDay };
+}
+
+/** Median of a few hundred steps from all over the series. */
+function typicalStep(elapsed: Float64Array, n: number): number {
+  const stride = Math.max(1, Math.floor(n / MOST_STEPS_SAMPLED));
+  const steps: number[] = [];
+  for (let i = 1; i < n; i += stride) steps.push(elapsed[i]! - elapsed[i - 1]!);
+  return steps.sort((a, b) => a - b)[steps.length >> 1] ?? 0;
 }
 
 /**

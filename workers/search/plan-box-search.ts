@@ -50,7 +50,7 @@ export function planBoxSearch(series: SearchSeries, settings: BoxSearchSettings)
   };
   const contradiction = findContradiction(settings, range, cadenceDays);
   if (contradiction !== undefined) return failed(contradiction);
-  return { kind: 'done', value: makePlan(range, settings.durationsDays, limits) };
+  return { kind: 'done', value: makePlan(range, settings, limits) };
 }
 
 interface PlannedRange {
@@ -61,7 +61,11 @@ interface PlannedRange {
   readonly densityCgs: number | undefined;
 }
 
-function makePlan(range: PlannedRange, given: readonly number[] | undefined, limits: DurationLimits): BoxPlan {
+function makePlan(
+  range: PlannedRange,
+  { durationsDays: given, objective, masked }: BoxSearchSettings,
+  limits: DurationLimits,
+): BoxPlan {
   const { shortestPeriodDays, longestPeriodDays, oversampling, densityCgs } = range;
   const periods = makePeriodGrid(range);
   const durations =
@@ -79,6 +83,9 @@ function makePlan(range: PlannedRange, given: readonly number[] | undefined, lim
       trialCount: periods.length,
       durationsDays: [...durations],
       densityCgs,
+      objective,
+      round: masked.length + 1,
+      maskedPoints: 0,
     },
     rangeAt: (periodDays, into) =>
       sensibleDurations(

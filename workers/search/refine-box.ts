@@ -1,22 +1,16 @@
 import type { SearchSeries } from '../../src/contract/search-contract.ts';
 import type { Ephemeris } from '../../src/core/ephemeris.ts';
-import { measureBox } from '../../src/core/measure-box.ts';
 import { LARGEST_DUTY_CYCLE } from './box-durations.ts';
 import { findEdgeGaps, findPeriodGap } from './box-gaps.ts';
-import { type BoxWork, makeTrialBox, searchTrial } from './box-search.ts';
+import type { BoxWork } from './box-search.ts';
+import { measureEvents } from './event-sums.ts';
 
-/** How a neighbourhood is scanned on phase bins. */
-interface Fineness {
-  readonly binsPerBox: number;
-  /** Of the duration so far. */
-  readonly durations: readonly number[];
-  /** Trial periods let an event drift by this part of its duration over the span. */
-  readonly drift: number;
-}
-
-const FINE: Fineness = { binsPerBox: 30, durations: [0.7, 0.8, 0.9, 1, 1.1, 1.25, 1.4], drift: 1 / 16 };
-const FINEST: Fineness = { binsPerBox: 100, durations: [0.9, 0.94, 0.97, 1, 1.03, 1.06, 1.1], drift: 1 / 64 };
-const MOST_FINE_PERIODS = 120;
+/** The neighbourhood of a trial is tried on a lattice: period, epoch and duration. */
+const EPOCH_STEPS = [-0.42, -0.35, -0.28, -0.21, -0.14, -0.07, 0, 0.07, 0.14, 0.21, 0.28, 0.35, 0.42];
+const DURATION_FACTORS = [0.7, 0.8, 0.9, 1, 1.12, 1.26, 1.42];
+/** Trial periods let an event at the end of the span drift by this part of its duration. */
+const PERIOD_DRIFT = 1 / 12;
+const MOST_PERIODS = 40;
 /** The polish starts with steps of this part of the duration and halves them this often. */
 const FIRST_STEP = 1 / 24;
 const HALVINGS = 6;
@@ -29,44 +23,39 @@ export interface PeriodReach {
 }
 
 /**
- * Maximises the box S/N near a trial over period, epoch and duration: first on ever finer phase bins at periods
- * between the neighbouring trials, then on the unbinned series by a pattern search that moves the period, the box and
- * each of its edges. The epoch comes out in the middle of the span, and each edge midway between the points it parts.
+ * Maximises the box S/N near a trial over period, epoch and duration, exactly, on the unbinned series: first on a
+ * lattice between the neighbouring trials, then by a pattern search that moves the period, the box and each of its
+ * edges. The epoch comes out in the middle of the span, and each edge midway between the points it parts.
  */
 export function refineBox(series: SearchSeries, work: BoxWork, start: Ephemeris, reach: PeriodReach): Ephemeris {
   const span = spanOf(series);
-  const fine = scanFinely(work, start, reach, span, FINE);
-  const step = (FINE.drift * fine.durationDays * fine.periodDays) / span;
-  const near = { from: fine.periodDays - step, to: fine.periodDays + step };
-  const finest = scanFinely(work, fine, near, span, FINEST);
-  return settle(series, polish(series, moveToMiddle(series, finest)));
+  const starts = tryLattice(work, moveToMiddle(series, start), reach, span);
+  const polished = starts.map((near) => polish(work, span, near));
+  const best = polished.reduce((better, one) => (signalOf(work, one) > signalOf(work, better) ? one : better));
+  return settle(series, work, best);
 }
 
 const spanOf = ({ time }: SearchSeries): number => time.at(-1)! - time[0]!;
 
-function scanFinely(
-  work: BoxWork,
-  start: Ephemeris,
-  { from, to }: PeriodReach,
-  span: number,
-  { binsPerBox, durations: factors, drift }: Fineness,
-): Ephemeris {
-  const most = start.periodDays * LARGEST_DUTY_CYCLE;
-  const durations = Float64Array.from(factors, (factor) => Math.min(most, factor * start.durationDays));
-  const range = { first: 0, last: durations.length - 1 };
-  const step = (drift * start.durationDays * start.periodDays) / span;
-  const count = Math.max(2, Math.min(MOST_FINE_PERIODS, Math.ceil((to - from) / step)));
-  const box = makeTrialBox();
-  let best = start;
-  let bestSignal = 0;
-  for (let i = 0; i <= count; i += 1) {
-    const periodDays = from + ((to - from) * i) / count;
-    searchTrial(work, periodDays, durations, range, box, binsPerBox);
-    if (box.signalToNoise <= bestSignal) continue;
-    bestSignal = box.signalToNoise;
-    best = { periodDays, epochDays: box.epochDays, durationDays: box.durationDays };
-  }
-  return best;
+/** The best of the lattice for each duration: a pattern search from one alone may end in a side maximum. */
+function tryLattice(work: BoxWork, start: Ephemeris, { from, to }: PeriodReach, span: number): Ephemeris[] {
+  const step = (2 * PERIOD_DRIFT * start.durationDays * start.periodDays) / span;
+  const count = Math.max(2, Math.min(MOST_PERIODS, Math.ceil((to - from) / step)));
+  return DURATION_FACTORS.map((factor) => {
+    const durationDays = start.durationDays * factor;
+    let best = { ...start, durationDays };
+    let bestSignal = 0;
+    for (let i = 0; i <= count; i += 1)
+      for (const shift of EPOCH_STEPS) {
+        const periodDays = from + ((to - from) * i) / count;
+        const tried = { periodDays, epochDays: start.epochDays + shift * start.durationDays, durationDays };
+        const signal = signalOf(work, tried);
+        if (!(signal > bestSignal)) continue;
+        best = tried;
+        bestSignal = signal;
+      }
+    return best;
+  });
 }
 
 /** The epoch nearest the middle of the span: there it hardly depends on the period. */
@@ -76,16 +65,15 @@ function moveToMiddle({ time }: SearchSeries, ephemeris: Ephemeris): Ephemeris {
   return { ...ephemeris, epochDays: epochDays + Math.round((middle - epochDays) / periodDays) * periodDays };
 }
 
-function polish(series: SearchSeries, start: Ephemeris): Ephemeris {
-  const span = spanOf(series);
+function polish(work: BoxWork, span: number, start: Ephemeris): Ephemeris {
   let best = start;
-  let bestSignal = signalOf(series, start);
+  let bestSignal = signalOf(work, start);
   let step = start.durationDays * FIRST_STEP;
   let halvings = 0;
   for (let round = 0; round < MOST_ROUNDS && halvings <= HALVINGS; round += 1) {
     const before = bestSignal;
     for (const moved of neighboursOf(best, step, span)) {
-      const signal = signalOf(series, moved);
+      const signal = signalOf(work, moved);
       if (!(signal > bestSignal)) continue;
       best = moved;
       bestSignal = signal;
@@ -97,9 +85,9 @@ function polish(series: SearchSeries, start: Ephemeris): Ephemeris {
   return best;
 }
 
-function signalOf({ time, flux, error }: SearchSeries, ephemeris: Ephemeris): number {
+function signalOf(work: BoxWork, ephemeris: Ephemeris): number {
   if (!(ephemeris.durationDays > 0 && ephemeris.durationDays <= ephemeris.periodDays * LARGEST_DUTY_CYCLE)) return 0;
-  return measureBox(time, flux, error, ephemeris)?.signalToNoise ?? 0;
+  return measureEvents(work, ephemeris)?.signalToNoise ?? 0;
 }
 
 function neighboursOf({ periodDays, epochDays, durationDays }: Ephemeris, step: number, span: number): Ephemeris[] {
@@ -115,26 +103,26 @@ function neighboursOf({ periodDays, epochDays, durationDays }: Ephemeris, step: 
 }
 
 /** Moves edges and period to the middle of where the box holds the same points. */
-function settle(series: SearchSeries, ephemeris: Ephemeris): Ephemeris {
-  const steady = settleEdges(series, ephemeris);
+function settle(series: SearchSeries, work: BoxWork, ephemeris: Ephemeris): Ephemeris {
+  const steady = settleEdges(series, work, ephemeris);
   const [shorter, longer] = findPeriodGap(series, steady);
   const centred = { ...steady, periodDays: steady.periodDays + (shorter + longer) / 2 };
-  return settleEdges(series, keepBetter(series, centred, steady));
+  return settleEdges(series, work, keepBetter(work, centred, steady));
 }
 
-function settleEdges(series: SearchSeries, ephemeris: Ephemeris): Ephemeris {
+function settleEdges(series: SearchSeries, work: BoxWork, ephemeris: Ephemeris): Ephemeris {
   const { leading, trailing } = findEdgeGaps(series, ephemeris);
   const start = (leading[0] + leading[1]) / 2;
   const end = (trailing[0] + trailing[1]) / 2;
   const durationDays = Math.min(end - start, ephemeris.periodDays * LARGEST_DUTY_CYCLE);
   return keepBetter(
-    series,
+    work,
     { ...ephemeris, epochDays: ephemeris.epochDays + (start + end) / 2, durationDays },
     ephemeris,
   );
 }
 
 /** The new box, unless a quarter of the period or a tie at an edge has cut a point off. */
-function keepBetter(series: SearchSeries, next: Ephemeris, last: Ephemeris): Ephemeris {
-  return signalOf(series, next) >= signalOf(series, last) ? next : last;
+function keepBetter(work: BoxWork, next: Ephemeris, last: Ephemeris): Ephemeris {
+  return signalOf(work, next) >= signalOf(work, last) ? next : last;
 }

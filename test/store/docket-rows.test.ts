@@ -1,10 +1,11 @@
 import { describe, expect, it } from 'vitest';
-import { shownRows } from '../../src/docket/docket-rows.ts';
-import { smallFoldPoints } from '../../src/docket/small-fold-path.ts';
+import { miniaturePoints } from '../../src/docket/miniature-points.ts';
 import type { Command } from '../../src/session/commands.ts';
 import * as history from '../../src/session/history.ts';
+import { shownRows } from '../../src/store/docket-rows.ts';
 import type { TargetSummary } from '../../src/store/results-store.ts';
-import { emptySession, stampFrom, targetOf } from '../session/session-arbitrary.ts';
+import { failedSummary } from '../../src/store/summarise-target.ts';
+import { emptySession, numbersOf, stampFrom, targetOf } from '../session/session-arbitrary.ts';
 
 const commands: Command[] = [
   { kind: 'add targets', targets: [targetOf(1), targetOf(2), targetOf(3)] },
@@ -14,7 +15,7 @@ const commands: Command[] = [
     caseId: 'c',
     origin: { kind: 'hand' },
     timing: { kind: 'linear', periodDays: 2.5, epochDays: 0, durationDays: 0.1 },
-    numbers: { key: 'k', boxDepth: 0.01, boxDepthError: 0.001, signalToNoise: 30, sde: undefined, eventCount: 4 },
+    numbers: numbersOf({ signalToNoise: 30, eventCount: 4 }),
   },
   {
     kind: 'rule',
@@ -29,10 +30,10 @@ const { present } = commands.reduce(
   history.createHistory(emptySession()),
 );
 const summary = (periodDays: number, signalToNoise: number): TargetSummary => ({
-  key: 'x',
+  ...failedSummary('x', ''),
+  failure: undefined,
   periodDays,
   signalToNoise,
-  smallFold: [],
 });
 const summaries = new Map([
   ['target 1', summary(5, 8)],
@@ -61,9 +62,25 @@ describe('rows of the docket', () => {
   ])('are filtered by "%s"', (filter, labels) => expect(found(filter)).toEqual(labels));
 });
 
+describe('order of the docket', () => {
+  const ordered = (by: 'label' | 'period' | 'S/N' | 'docket', descending: boolean) =>
+    shownRows(present, summaries, '', { by, descending }).map(({ target }) => target.label);
+
+  it('puts targets without the value last, both ways', () => {
+    expect(ordered('period', false)).toEqual(['T-1', 'T-2', 'T-3']);
+    expect(ordered('period', true)).toEqual(['T-2', 'T-1', 'T-3']);
+    expect(ordered('S/N', true)).toEqual(['T-1', 'T-2', 'T-3']);
+  });
+
+  it('is the docket’s own unless asked', () => {
+    expect(ordered('docket', false)).toEqual(['T-1', 'T-2', 'T-3']);
+    expect(ordered('label', true)).toEqual(['T-3', 'T-2', 'T-1']);
+  });
+});
+
 describe('small fold', () => {
   it('leaves missing bins out and draws the deepest lowest', () => {
-    const points = smallFoldPoints([0, Number.NaN, -0.01, 0], 40, 20);
+    const points = miniaturePoints([0, Number.NaN, -0.01, 0], 40, 20);
     expect(points).toHaveLength(3);
     expect(points[1]!.y).toBeGreaterThan(points[0]!.y);
   });

@@ -1,5 +1,5 @@
-/** Positions of a small fold's bins in a box, deepest at the bottom; missing bins are left out. */
-export function smallFoldPoints(
+/** Positions of a miniature’s bins in a box, deepest at the bottom; missing bins are left out. */
+export function miniaturePoints(
   bins: readonly number[],
   widthPx: number,
   heightPx: number,

@@ -1,6 +1,7 @@
 import type { SessionDocument, Target } from '../session/document.ts';
 import { type Standing, targetStanding } from '../session/selectors.ts';
-import type { TargetSummary } from '../store/results-store.ts';
+import type { ResultsState, TargetSummary } from './results-store.ts';
+import type { DocketOrder, ViewState } from './view-store.ts';
 
 /** What one line of the docket says of a target. */
 export interface DocketRow {
@@ -12,6 +13,9 @@ export interface DocketRow {
   readonly signalToNoise: number | undefined;
   /** Undefined while the target has not been searched. */
   readonly smallFold: readonly number[] | undefined;
+  readonly smallStrip: readonly number[] | undefined;
+  /** Why it could not be searched. */
+  readonly failure: string | undefined;
 }
 
 /** The first case speaks for its target; without one, the strongest peak of the search does. */
@@ -26,6 +30,8 @@ export function docketRow(target: Target, summary: TargetSummary | undefined): D
       first === undefined ? summary?.periodDays : first.timing.kind === 'linear' ? first.timing.periodDays : undefined,
     signalToNoise: first?.numbers?.signalToNoise ?? (first === undefined ? summary?.signalToNoise : undefined),
     smallFold: summary?.smallFold,
+    smallStrip: summary?.smallStrip,
+    failure: summary?.failure,
   };
 }
 
@@ -34,11 +40,39 @@ export function shownRows(
   document: SessionDocument | undefined,
   summaries: ReadonlyMap<string, TargetSummary>,
   filter: string,
+  order: DocketOrder = { by: 'docket', descending: false },
 ): readonly DocketRow[] {
   const rows = (document?.targets ?? []).map((target) => docketRow(target, summaries.get(target.id)));
   const terms = parseFilter(filter);
-  return rows.filter((row) => terms.every((term) => term(row)));
+  return sortRows(
+    rows.filter((row) => terms.every((term) => term(row))),
+    order,
+  );
 }
+
+/** The targets as the docket shows them now. */
+export function shownTargets(
+  document: SessionDocument | undefined,
+  { summaries }: Pick<ResultsState, 'summaries'>,
+  { filter, docketOrder }: Pick<ViewState, 'filter' | 'docketOrder'>,
+): readonly Target[] {
+  return shownRows(document, summaries, filter, docketOrder).map(({ target }) => target);
+}
+
+/** Rows without the value stand last, whichever way the others go. */
+function sortRows(rows: readonly DocketRow[], { by, descending }: DocketOrder): readonly DocketRow[] {
+  const sign = descending ? -1 : 1;
+  if (by === 'docket') return descending ? rows.toReversed() : rows;
+  if (by === 'label') return rows.toSorted((a, b) => sign * COLLATOR.compare(a.target.label, b.target.label));
+  const quantityOf = ({ periodDays, signalToNoise }: DocketRow) => (by === 'period' ? periodDays : signalToNoise);
+  return rows.toSorted((a, b) => {
+    const [left, right] = [quantityOf(a), quantityOf(b)];
+    if (left === undefined || right === undefined) return Number(left === undefined) - Number(right === undefined);
+    return sign * (left - right);
+  });
+}
+
+const COLLATOR = new Intl.Collator('en', { numeric: true });
 
 type Term = (row: DocketRow) => boolean;
 

@@ -1,0 +1,90 @@
+import { isNarrow } from '../../bench/narrow.ts';
+import { type AppCommand, hasPeak, hasTargets } from './app-command.ts';
+
+export const SEARCH_COMMANDS: readonly AppCommand[] = [
+  {
+    title: 'Search the whole docket',
+    room: 'search',
+    keys: ['Shift+S'],
+    when: hasTargets,
+    run: ({ sweep }) => void sweep.start(),
+  },
+  {
+    title: 'Search again',
+    room: 'search',
+    keys: ['r'],
+    when: hasTargets,
+    run: (candling) => candling.targetResults.searchAgain(candling.actions.bench().target!),
+  },
+  {
+    title: 'Search settings',
+    room: 'search',
+    keys: ['Shift+R'],
+    when: hasTargets,
+    run: ({ view }) => view.setState({ dialog: 'search settings' }),
+  },
+  {
+    title: 'Show or hide the periodogram',
+    room: 'search',
+    keys: ['y'],
+    when: hasTargets,
+    run: ({ view }) => view.setState({ periodogramHidden: !(view.getState().periodogramHidden ?? isNarrow()) }),
+  },
+  {
+    title: 'Arrange for folding or for searching',
+    room: 'search',
+    keys: ['b'],
+    when: hasTargets,
+    run: ({ view }) => view.setState({ arrangement: view.getState().arrangement === 'fold' ? 'search' : 'fold' }),
+  },
+  {
+    title: 'Strongest peak of the search',
+    room: 'search',
+    keys: ['p'],
+    when: hasPeak,
+    run: ({ actions }) => actions.pickPeak(actions.bench().search!.peaks[0]!, 1),
+  },
+  {
+    title: 'One more round: mask the strongest signal and search again',
+    room: 'search',
+    keys: ['u'],
+    foot: { keys: ['u'], words: 'one more round' },
+    when: hasPeak,
+    run: ({ actions }) => actions.nextRound(),
+  },
+  {
+    title: 'Back a round: unmask the last signal',
+    room: 'search',
+    keys: ['Shift+U'],
+    when: (candling) => (candling.actions.bench().target?.search.masked?.length ?? 0) > 0,
+    run: ({ actions }) => actions.previousRound(),
+  },
+  {
+    title: 'False-alarm probability of the strongest signal',
+    room: 'search',
+    keys: ['q'],
+    when: hasPeak,
+    run: ({ actions }) => actions.estimateFalseAlarms(),
+  },
+  {
+    title: 'Look for single events',
+    room: 'search',
+    keys: ['s'],
+    when: hasTargets,
+    run: ({ actions }) => actions.findSingles(),
+  },
+  {
+    title: 'Box or Lomb-Scargle periodogram',
+    room: 'search',
+    keys: ['l'],
+    when: hasTargets,
+    run: ({ actions, view }) => actions.showPeriodogram(view.getState().periodogram === 'box' ? 'sines' : 'box'),
+  },
+  {
+    title: 'Estimate false alarms over the whole docket',
+    room: 'search',
+    keys: ['Shift+Q'],
+    when: hasTargets,
+    run: ({ sweep }) => void sweep.start('false alarms'),
+  },
+];
