@@ -1,4 +1,4 @@
-import { signalToNoiseAt } from '../core/extreme-value.ts';
+import { strengthAt } from '../core/extreme-value.ts';
 import { isSameSignal } from '../core/same-signal.ts';
 import { numberLabel } from '../plot/number-label.ts';
 import type { PeriodogramAlias, PeriodogramPeak } from '../plot/periodogram-scene.ts';
@@ -25,7 +25,7 @@ const TITLES: Readonly<Record<PeriodogramValue, string>> = { SDE: 'SDE', levelle
 export function boxView(bench: BenchSelection, quantity: PeriodogramValue): PeriodogramView {
   const { search, falseAlarm } = bench;
   const values = search && { SDE: search.sde, levelled: search.levelledEfficiency, 'S/N': search.objective }[quantity];
-  const level = falseAlarm === undefined ? undefined : signalToNoiseAt(falseAlarm, LEVEL);
+  const level = falseAlarm === undefined ? undefined : strengthAt(falseAlarm, LEVEL);
   return {
     periods: search?.periods ?? NONE,
     values: values ?? NONE,

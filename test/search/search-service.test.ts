@@ -32,7 +32,7 @@ describe('search service', () => {
     const part = expectDone(await service.searchPart(job, (progress) => reports.push(progress)));
     expect(part.key).toBe('k');
     expect(reports.every(({ done }, i) => i === 0 || done > reports[i - 1]!.done)).toBe(true);
-    expect(reports.every(({ done, total }) => done <= total && total === part.periods.length)).toBe(true);
+    expect(reports.every(({ done, total }) => done <= total && total === part.trials.length)).toBe(true);
   });
 
   it('keeps four series and forgets the one kept longest ago', async () => {

@@ -33,7 +33,7 @@ export function estimateTimingErrors(
   const { periodDays, epochDays, durationDays } = ephemeris;
   const { leading, trailing } = findEdgeGaps(series, ephemeris);
   const sampling = ((leading[1] - leading[0]) ** 2 + (trailing[1] - trailing[0]) ** 2) / 48;
-  const epochErrorDays = Math.sqrt(noiseVariance(durationDays, signalToNoise, cadenceDays) + sampling);
+  const epochErrorDays = Math.sqrt(epochNoiseVariance(durationDays, signalToNoise, cadenceDays) + sampling);
   const cycles = describeCycles(series.time, ephemeris);
   const [down, up] = findPeriodGap(series, ephemeris);
   const periodError = Math.hypot(epochErrorDays / cycles.deviation, (up - down) / Math.sqrt(12));
@@ -45,7 +45,7 @@ export function estimateTimingErrors(
 }
 
 /** Of the epoch, from white noise alone: the first two terms above. */
-function noiseVariance(durationDays: number, signalToNoise: number, cadenceDays: number): number {
+export function epochNoiseVariance(durationDays: number, signalToNoise: number, cadenceDays: number): number {
   const tau = Math.min(durationDays / 2, Math.hypot(INGRESS_FRACTION * durationDays, cadenceDays));
   const ingress = (durationDays * tau) / (2 * signalToNoise ** 2);
   return ingress + (STEP_PLACE_VARIANCE / 2) * (durationDays / signalToNoise ** 2) ** 2;
@@ -60,7 +60,9 @@ export function roughTimingErrors(
   signalToNoise: number,
   { cadenceDays, spanDays }: { readonly cadenceDays: number; readonly spanDays: number },
 ): TimingErrors {
-  const epochErrorDays = Math.sqrt(noiseVariance(durationDays, signalToNoise, cadenceDays) + cadenceDays ** 2 / 24);
+  const epochErrorDays = Math.sqrt(
+    epochNoiseVariance(durationDays, signalToNoise, cadenceDays) + cadenceDays ** 2 / 24,
+  );
   const deviation = spanDays / periodDays / Math.sqrt(12);
   return { epochDays, epochErrorDays, periodErrorDays: Math.min(periodDays, epochErrorDays / deviation) };
 }

@@ -13,6 +13,7 @@ import type { Checkpoint } from '../checkpoint.ts';
 import { estimateTimingErrors, roughTimingErrors, type TimingErrors } from './box-errors.ts';
 import type { BoxWork } from './box-search.ts';
 import { maskWork, measureEvents } from './event-sums.ts';
+import { type BlockKernel, makeBlockKernel } from './kernel/block-kernel.ts';
 import { MASK_HALF_WIDTH } from './mask-signals.ts';
 import { relatePeriods, type Sampling } from './peak-relation.ts';
 import { refineBox } from './refine-box.ts';
@@ -55,6 +56,7 @@ interface Hunt {
   /** The series without the events of every signal found. */
   rest: BoxWork;
   readonly cadenceDays: number;
+  readonly kernel: BlockKernel | undefined;
 }
 
 /**
@@ -85,6 +87,7 @@ export async function findSignals(
     found: [],
     rest: work,
     cadenceDays: medianStep(series.time),
+    kernel: makeBlockKernel(),
   };
   const candidates = localMaxima(periodogram.objective).slice(0, MOST_CANDIDATES);
   for (const [rank, trial] of candidates.entries()) {
@@ -117,7 +120,7 @@ function consider(hunt: Hunt, trial: number): void {
     return;
   }
   if (found.length === MOST_SIGNALS) return;
-  const refined = refineBox(hunt.series, hunt.work, candidate, reachOf(periodogram.periods, trial));
+  const refined = refineBox(hunt.series, hunt.work, candidate, reachOf(periodogram.periods, trial), hunt.kernel);
   if (found.some(({ peak }) => isSameSignal(peak, refined, sampling.spanDays))) return;
   const peak = describePeak(hunt, refined, trial, (signalToNoise) =>
     estimateTimingErrors(hunt.series, refined, signalToNoise, hunt.cadenceDays),

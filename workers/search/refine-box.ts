@@ -2,15 +2,24 @@ import type { SearchSeries } from '../../src/contract/search-contract.ts';
 import type { Ephemeris } from '../../src/core/ephemeris.ts';
 import { LARGEST_DUTY_CYCLE } from './box-durations.ts';
 import { findEdgeGaps, findPeriodGap } from './box-gaps.ts';
-import type { BoxWork } from './box-search.ts';
+import { type BoxWork, makeTrialBox, searchTrial, type TrialBox } from './box-search.ts';
 import { measureEvents } from './event-sums.ts';
+import type { BlockKernel } from './kernel/block-kernel.ts';
+import { makeBlockSearch } from './kernel/block-search.ts';
+import { makeFineBlock } from './kernel/plan-blocks.ts';
 
-/** The neighbourhood of a trial is tried on a lattice: period, epoch and duration. */
-const EPOCH_STEPS = [-0.42, -0.35, -0.28, -0.21, -0.14, -0.07, 0, 0.07, 0.14, 0.21, 0.28, 0.35, 0.42];
-const DURATION_FACTORS = [0.7, 0.8, 0.9, 1, 1.12, 1.26, 1.42];
-/** Trial periods let an event at the end of the span drift by this part of its duration. */
+/** The neighbourhood of a trial is scanned on this many phase bins in the shortest box. */
+const BINS_PER_BOX = 24;
+/** Of the duration so far. */
+const DURATION_FACTORS = [0.7, 0.8, 0.9, 1, 1.1, 1.25, 1.4];
+/** Trial periods let an event at the ends of the span drift by this part of its duration. */
 const PERIOD_DRIFT = 1 / 12;
-const MOST_PERIODS = 40;
+const MOST_FINE_PERIODS = 96;
+/** Part of the shortest box that a period may drift within one profile of the compiled kernel. */
+const PROFILE_DRIFT = 1 / 32;
+/** Noise makes many maxima of nearly the same height: so many of the scanned ones are polished. */
+const MOST_POLISHED = 6;
+
 /** The polish starts with steps of this part of the duration and halves them this often. */
 const FIRST_STEP = 1 / 24;
 const HALVINGS = 6;
@@ -23,39 +32,70 @@ export interface PeriodReach {
 }
 
 /**
- * Maximises the box S/N near a trial over period, epoch and duration, exactly, on the unbinned series: first on a
- * lattice between the neighbouring trials, then by a pattern search that moves the period, the box and each of its
- * edges. The epoch comes out in the middle of the span, and each edge midway between the points it parts.
+ * Maximises the box S/N near a trial over period, epoch and duration: first on fine phase bins at periods between the
+ * neighbouring trials, then, from the best of those, on the unbinned series by a pattern search that moves the period,
+ * the box and each of its edges. The epoch comes out in the middle of the span, and each edge midway between the
+ * points it parts.
  */
-export function refineBox(series: SearchSeries, work: BoxWork, start: Ephemeris, reach: PeriodReach): Ephemeris {
+export function refineBox(
+  series: SearchSeries,
+  work: BoxWork,
+  start: Ephemeris,
+  reach: PeriodReach,
+  kernel: BlockKernel | undefined,
+): Ephemeris {
   const span = spanOf(series);
-  const starts = tryLattice(work, moveToMiddle(series, start), reach, span);
-  const polished = starts.map((near) => polish(work, span, near));
-  const best = polished.reduce((better, one) => (signalOf(work, one) > signalOf(work, better) ? one : better));
+  const scanned = scanFinely(work, start, reach, span, kernel)
+    .map((one) => ({ one, signal: signalOf(work, one) }))
+    .sort((a, b) => b.signal - a.signal)
+    .slice(0, MOST_POLISHED);
+  const polished = scanned.map(({ one }) => polish(work, span, moveToMiddle(series, one)));
+  const best = polished.reduce((better, one) => (signalOf(work, one) > signalOf(work, better) ? one : better), start);
   return settle(series, work, best);
 }
 
 const spanOf = ({ time }: SearchSeries): number => time.at(-1)! - time[0]!;
 
-/** The best of the lattice for each duration: a pattern search from one alone may end in a side maximum. */
-function tryLattice(work: BoxWork, start: Ephemeris, { from, to }: PeriodReach, span: number): Ephemeris[] {
+/** The best box at each of the periods between the neighbours. */
+function scanFinely(
+  work: BoxWork,
+  start: Ephemeris,
+  { from, to }: PeriodReach,
+  span: number,
+  kernel: BlockKernel | undefined,
+): Ephemeris[] {
+  const most = start.periodDays * LARGEST_DUTY_CYCLE;
+  const durations = Float64Array.from(DURATION_FACTORS, (factor) => Math.min(most, factor * start.durationDays));
   const step = (2 * PERIOD_DRIFT * start.durationDays * start.periodDays) / span;
-  const count = Math.max(2, Math.min(MOST_PERIODS, Math.ceil((to - from) / step)));
-  return DURATION_FACTORS.map((factor) => {
-    const durationDays = start.durationDays * factor;
-    let best = { ...start, durationDays };
-    let bestSignal = 0;
-    for (let i = 0; i <= count; i += 1)
-      for (const shift of EPOCH_STEPS) {
-        const periodDays = from + ((to - from) * i) / count;
-        const tried = { periodDays, epochDays: start.epochDays + shift * start.durationDays, durationDays };
-        const signal = signalOf(work, tried);
-        if (!(signal > bestSignal)) continue;
-        best = tried;
-        bestSignal = signal;
-      }
-    return best;
+  const count = Math.max(2, Math.min(MOST_FINE_PERIODS, Math.ceil((to - from) / step)));
+  const periods = Float64Array.from({ length: count + 1 }, (_, i) => from + ((to - from) * i) / count);
+  const found: Ephemeris[] = [];
+  scanPeriods(work, periods, durations, kernel, (trial, { signalToNoise, epochDays, durationDays }) => {
+    if (signalToNoise > 0) found.push({ periodDays: periods[trial]!, epochDays, durationDays });
   });
+  return found;
+}
+
+function scanPeriods(
+  work: BoxWork,
+  periods: Float64Array,
+  durations: Float64Array,
+  kernel: BlockKernel | undefined,
+  take: (trial: number, box: TrialBox) => void,
+): void {
+  if (kernel !== undefined) {
+    const free = kernel.allocate(0);
+    const block = makeFineBlock(periods, durations, { binsPerBox: BINS_PER_BOX, drift: PROFILE_DRIFT });
+    makeBlockSearch(kernel, work, durations).search(block, periods, take);
+    kernel.release(free);
+    return;
+  }
+  const box = makeTrialBox();
+  const range = { first: 0, last: durations.length - 1 };
+  for (let trial = 0; trial < periods.length; trial += 1) {
+    searchTrial(work, periods[trial]!, durations, range, box, BINS_PER_BOX);
+    take(trial, box);
+  }
 }
 
 /** The epoch nearest the middle of the span: there it hardly depends on the period. */

@@ -30,7 +30,8 @@ export async function searchBoxPart(
 
 type SearchBlock = (block: TrialBlock, take: (trial: number, best: TrialBox) => void) => void;
 
-function makeTrialSearch(work: BoxWork, plan: BoxPlan, compiled: BlockKernel | undefined): SearchBlock {
+/** Searches one block of trials after another on a series. */
+export function makeTrialSearch(work: BoxWork, plan: BoxPlan, compiled: BlockKernel | undefined): SearchBlock {
   const { periods, durations } = plan;
   if (compiled !== undefined) {
     const blockSearch = makeBlockSearch(compiled, work, durations);

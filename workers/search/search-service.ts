@@ -1,4 +1,4 @@
-import { failed, type Outcome } from '../../src/contract/outcome.ts';
+import { done, failed, type Outcome } from '../../src/contract/outcome.ts';
 import type { SearchSeries, SearchWorker } from '../../src/contract/search-contract.ts';
 import type { Ephemeris } from '../../src/core/ephemeris.ts';
 import { createCheckpoint } from '../checkpoint.ts';
@@ -6,7 +6,12 @@ import { createRunningJobs } from '../running-jobs.ts';
 import { transferArrays } from '../transfer-arrays.ts';
 import { maskSignals } from './mask-signals.ts';
 import { searchBoxPart } from './search-part.ts';
+import { computeLombScargle } from './sines/lomb-scargle.ts';
+import { findSingleEvents } from './singles/find-singles.ts';
+import { findPeriodOfSingle } from './singles/period-of-single.ts';
+import { findPeriodsFromTimes } from './singles/periods-from-times.ts';
 import { summariseBoxSearch } from './summarise.ts';
+import { joinSurrogates, searchSurrogates } from './surrogates.ts';
 
 const MOST_SERIES = 4;
 
@@ -19,12 +24,13 @@ export function createSearchService(): SearchWorker {
   /** The series of a job, without the events that its settings mask. */
   const withSeries = async <T>(
     { seriesId, settings }: { readonly seriesId: string; readonly settings?: Partial<Masked> | undefined },
-    work: (series: SearchSeries) => Promise<Outcome<T>>,
+    work: (series: SearchSeries, maskedPoints: number) => Promise<Outcome<T>>,
   ): Promise<Outcome<T>> => {
     const series = kept.get(seriesId);
     if (series === undefined)
       return failed('The prepared series is no longer at hand; start the search again.', `series ${seriesId}`);
-    return transferArrays(await work(maskSignals(series, settings?.masked ?? [])));
+    const rest = maskSignals(series, settings?.masked ?? []);
+    return transferArrays(await work(rest, series.time.length - rest.time.length));
   };
   return {
     keep: async (series) => {
@@ -42,7 +48,36 @@ export function createSearchService(): SearchWorker {
       ),
     summarise: (job) =>
       jobs.run(job.jobId, (isCancelled) =>
-        withSeries(job, (series) => summariseBoxSearch(series, job, createCheckpoint(isCancelled))),
+        withSeries(job, (series, maskedPoints) =>
+          summariseBoxSearch(series, { ...job, maskedPoints }, createCheckpoint(isCancelled)),
+        ),
+      ),
+    searchSurrogates: (job, onProgress) =>
+      jobs.run(job.jobId, (isCancelled) =>
+        withSeries(job, (series) => searchSurrogates(series, job, createCheckpoint(isCancelled, onProgress))),
+      ),
+    joinSurrogates: async ({ key, parts }) => transferArrays(done(joinSurrogates(key, parts))),
+    lombScargle: (job, onProgress) =>
+      jobs.run(job.jobId, (isCancelled) =>
+        withSeries({ seriesId: job.seriesId }, (series) =>
+          computeLombScargle(series, job, createCheckpoint(isCancelled, onProgress)),
+        ),
+      ),
+    findSingleEvents: (job) =>
+      jobs.run(job.jobId, (isCancelled) =>
+        withSeries(job, (series) => findSingleEvents(series, job, createCheckpoint(isCancelled))),
+      ),
+    periodsFromTimes: (job) =>
+      jobs.run(job.jobId, (isCancelled) =>
+        withSeries({ seriesId: job.seriesId }, (series) =>
+          findPeriodsFromTimes(series, job, createCheckpoint(isCancelled)),
+        ),
+      ),
+    periodOfSingle: (job) =>
+      jobs.run(job.jobId, (isCancelled) =>
+        withSeries({ seriesId: job.seriesId }, (series) =>
+          findPeriodOfSingle(series, job, createCheckpoint(isCancelled)),
+        ),
       ),
     cancel: async (jobId) => jobs.cancel(jobId),
   };

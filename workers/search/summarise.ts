@@ -23,7 +23,7 @@ import { planBoxSearch } from './plan-box-search.ts';
 /** Joins the parts of a search, in any order, finds its signals and says what they stand out from. */
 export async function summariseBoxSearch(
   series: SearchSeries,
-  { key, settings, parts }: Omit<SummariseJob, 'jobId' | 'seriesId'>,
+  { key, settings, parts, maskedPoints = 0 }: Omit<SummariseJob, 'jobId' | 'seriesId'> & { maskedPoints?: number },
   checkpoint: Checkpoint,
 ): Promise<Outcome<BoxSearchResult>> {
   const planned = planBoxSearch(series, settings);
@@ -50,7 +50,7 @@ export async function summariseBoxSearch(
   const peaks = await findSignals(series, work, columns, noise, checkpoint);
   if (peaks === undefined) return cancelled;
   const holdBack = findHoldBack(work, peaks, noise);
-  return done({ key, ...columns, correlatedNoise: noise, peaks, holdBack, settings: resolved });
+  return done({ key, ...columns, correlatedNoise: noise, peaks, holdBack, settings: { ...resolved, maskedPoints } });
 }
 
 type Scan = Pick<BoxSearchResult, 'periods' | 'signalToNoise' | 'durationDays' | 'epochDays' | 'depth'>;

@@ -1,10 +1,10 @@
 import type { BoxWork, TrialBox } from '../box-search.ts';
 import { type BinnedSeries, binInTime } from './bin-in-time.ts';
 import type { BlockKernel } from './block-kernel.ts';
-import { BINS_PER_BOX, type TrialBlock } from './plan-blocks.ts';
+import type { TrialBlock } from './plan-blocks.ts';
 
-/** Points are merged in time when the shortest box has this many such bins, and there is something to merge. */
-const TIME_BINS_PER_BOX = 20;
+/** Points are merged in time where a phase bin has this many such bins, and there is something to merge. */
+const TIME_BINS_PER_BIN = 2;
 /** Values of 4 bytes that the kernel keeps of a profile, and returns of a trial. */
 const HEAD_VALUES = 3;
 const FOUND_VALUES = 5;
@@ -63,7 +63,7 @@ export function makeBlockSearch(kernel: BlockKernel, work: BoxWork, durations: F
         for (let trial = first; trial < end; trial += 1) take(trial, best);
         return;
       }
-      const { series, time, weight, weighted } = load(mergeWidth(durations[firstDuration]!));
+      const { series, time, weight, weighted } = load(mergeWidth(durations[firstDuration]!, block.binsPerBox));
       const free = kernel.allocate(0);
       const middlePeriod = periods[(first + end - 1) >> 1]!;
       const widthOf = (days: number): number => Math.max(1, Math.round((days / middlePeriod) * bins));
@@ -96,7 +96,7 @@ export function makeBlockSearch(kernel: BlockKernel, work: BoxWork, durations: F
         room.longest,
         room.widthsAt,
         room.widths,
-        BINS_PER_BOX,
+        block.binsPerBox,
         leastWeight,
         room.places,
         room.sums,
@@ -169,7 +169,8 @@ function layOut(kernel: BlockKernel, { trials, segments, widths, bins, longest, 
 }
 
 /** Widths come in powers of two, so that neighbouring blocks share one merged series. */
-const mergeWidth = (shortestDays: number): number => 2 ** Math.floor(Math.log2(shortestDays / TIME_BINS_PER_BOX));
+const mergeWidth = (shortestDays: number, binsPerBox: number): number =>
+  2 ** Math.floor(Math.log2(shortestDays / (TIME_BINS_PER_BIN * binsPerBox)));
 
 /** Weighted standard deviation of the mean-subtracted flux. */
 function scatterOf({ weight, weighted, totalWeight }: BoxWork): number {

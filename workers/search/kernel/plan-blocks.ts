@@ -11,6 +11,8 @@ export interface TrialBlock {
   readonly bins: number;
   /** Longest span of one profile, days: within it no trial of the block drifts too far from the middle one. */
   readonly segmentDays: number;
+  /** A window thinner than twice this is tried at every start. */
+  readonly binsPerBox: number;
 }
 
 /** Phase bins in the shortest box of a block. */
@@ -58,7 +60,15 @@ function planBlock(
   const segmentDays = Math.min(spanDays, segmentOf(end - first, shortest, driftPerTrial));
   const middle = (first + end - 1) >> 1;
   rangeAt(periods[middle]!, range);
-  return { first, end, firstDuration: range.first, lastDuration: range.last, bins, segmentDays };
+  return {
+    first,
+    end,
+    firstDuration: range.first,
+    lastDuration: range.last,
+    bins,
+    segmentDays,
+    binsPerBox: BINS_PER_BOX,
+  };
 }
 
 interface BlockSize {
@@ -87,6 +97,25 @@ function costOfTrial(
   const cycles = segmentDays / periodDays;
   const binCost = cycles >= 1 ? WHOLE_BIN_COST : PART_BIN_COST * cycles;
   return (points * POINT_COST) / length + profiles * (PROFILE_COST + bins * binCost);
+}
+
+/** A block of any periods near one another, searched on finer bins than a plan's. */
+export function makeFineBlock(
+  periods: Float64Array,
+  durations: Float64Array,
+  { binsPerBox, drift }: { readonly binsPerBox: number; readonly drift: number },
+): TrialBlock {
+  const middle = periods[(periods.length - 1) >> 1]!;
+  const widest = Math.max(Math.abs(1 / periods[0]! - 1 / middle), Math.abs(1 / periods.at(-1)! - 1 / middle));
+  return {
+    first: 0,
+    end: periods.length,
+    firstDuration: 0,
+    lastDuration: durations.length - 1,
+    bins: Math.ceil((middle / durations[0]!) * binsPerBox),
+    segmentDays: widest > 0 ? (2 * drift * durations[0]!) / (widest * middle) : Number.POSITIVE_INFINITY,
+    binsPerBox,
+  };
 }
 
 /** The span over which the outermost trial of a block drifts by the largest part of the shortest box, each way. */
