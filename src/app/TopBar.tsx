@@ -63,11 +63,12 @@ function SweepWords() {
         <kbd>S</kbd> search the docket
       </button>
     ) : null;
-  const { done, total, startedAt } = running;
+  const { what, done, total, startedAt } = running;
   return (
     <span className="sweep" role="status">
       <span className="sweep-words small">
-        Sweep: {done} of {total} searched{timeLeftWords(done, total, Date.now() - startedAt)}
+        Sweep: {done} of {total} {what === 'search' ? 'searched' : 'with false alarms'}
+        {timeLeftWords(done, total, Date.now() - startedAt)}
       </span>
       <span className="progress-bar" aria-hidden="true">
         <i style={{ width: `${(100 * done) / total}%` }} />

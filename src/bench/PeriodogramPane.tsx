@@ -14,7 +14,7 @@ const KINDS = { box: 'box', sines: 'Lomb-Scargle' } as const;
 export function PeriodogramPane() {
   const { actions, view } = useCandling();
   const bench = useBench();
-  const { search, sines, ephemeris, running, runningSines, runningFalseAlarm } = bench;
+  const { search, sines, ephemeris, running, runningSines } = bench;
   const { periodogram, periodogramValue, arrangement } = useView((state) => state);
   const [cursor, setCursor] = useState<{ period: number; value: number | undefined }>();
   const themeKey = useThemeKey();
@@ -86,7 +86,6 @@ export function PeriodogramPane() {
           />
         )}
       </div>
-      {runningFalseAlarm !== undefined && <SearchProgress job={runningFalseAlarm} />}
     </section>
   );
 }

@@ -9,7 +9,7 @@ export function SearchProgress({ job }: { readonly job: RunningJob }) {
     <div className="search-progress" role="status">
       <p>
         {job.title}: <span className="number">{numberLabel(done)}</span> of{' '}
-        <span className="number">{numberLabel(total)}</span> periods
+        <span className="number">{numberLabel(total)}</span> {job.unit}
       </p>
       <div className="progress-bar" role="progressbar" aria-label={job.title} aria-valuenow={Math.round(percent)}>
         <i style={{ width: `${percent}%` }} />

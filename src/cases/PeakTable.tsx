@@ -158,15 +158,21 @@ function ChanceLine() {
   const { search, falseAlarm, runningFalseAlarm } = useBench();
   const [best] = search?.peaks ?? [];
   if (best === undefined) return null;
+  if (runningFalseAlarm !== undefined) {
+    const { done, total } = runningFalseAlarm.progress;
+    return (
+      <p className="small" role="status">
+        False alarms: {formatNumber(done)} of {formatNumber(total)} surrogates searched.{' '}
+        <button type="button" className="link" onClick={runningFalseAlarm.cancel}>
+          cancel
+        </button>
+      </p>
+    );
+  }
   if (falseAlarm === undefined)
     return (
       <p className="small">
-        <button
-          type="button"
-          className="button compact"
-          disabled={runningFalseAlarm !== undefined}
-          onClick={() => actions.estimateFalseAlarms()}
-        >
+        <button type="button" className="button compact" onClick={() => actions.estimateFalseAlarms()}>
           <kbd>Q</kbd> false-alarm probability
         </button>{' '}
         <span className="quiet">by searching this series with its blocks of time permuted and inverted</span>

@@ -4,6 +4,7 @@ import { formatNumber } from '../core/number-format.ts';
 import { RulingSign } from '../plot/RulingSign.tsx';
 import { type DocketRow, shownRows } from '../store/docket-rows.ts';
 import { useCandling, useDocument, useResults, useView } from '../store/use-candling.ts';
+import { ChanceWords } from './ChanceWords.tsx';
 import { DocketHeads } from './DocketHeads.tsx';
 import { miniaturePoints } from './miniature-points.ts';
 import { SittingLine } from './SittingLine.tsx';
@@ -57,6 +58,7 @@ export function Docket() {
       ) : (
         <>
           <SittingLine targets={document!.targets} />
+          <ChanceWords />
           <Unread />
           <DocketHeads />
           <Rows rows={rows} />

@@ -39,6 +39,8 @@ export type SweepKind = 'search' | 'false alarms';
 
 export interface RunningJob {
   readonly title: string;
+  /** What the progress counts. */
+  readonly unit: string;
   readonly progress: Progress;
   readonly startedAt: number;
   readonly cancel: () => void;

@@ -9,7 +9,7 @@ export interface RunOnce {
   /** The value of a task; undefined when it failed (the sentence is filed under `failureKey`) or was cancelled. */
   settle<T>(key: string, task: RunningTask<T>, failureKey?: string): Promise<T | undefined>;
   /** Shows a job's progress under its title until it ends. */
-  progressOf(key: string, title: string): OnProgress;
+  progressOf(key: string, title: string, unit: string): OnProgress;
   cancel(key: string): void;
   /** The analyst cancelled it: it is not started again by itself. */
   cancelByHand(key: string): void;
@@ -48,12 +48,12 @@ export function createRunOnce(results: ResultsStore, now: () => number): RunOnce
       if (outcome.kind === 'failed') fileResult(results, 'failures', failureKey, outcome.error.sentence);
       return outcome.kind === 'done' ? outcome.value : undefined;
     },
-    progressOf(key, title) {
+    progressOf(key, title, unit) {
       const startedAt = now();
       return (progress) => {
         // A worker's last words may come after its job has ended here.
         if (!underway.has(key)) return;
-        const job = { title, progress, startedAt, cancel: () => cancelByHand(key) };
+        const job = { title, unit, progress, startedAt, cancel: () => cancelByHand(key) };
         results.setState({ running: withEntry(results.getState().running, key, job, MOST_RUNNING) });
       };
     },

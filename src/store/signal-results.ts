@@ -30,7 +30,7 @@ import {
 } from './target-keys.ts';
 import { runKey, seriesOf, type TargetResults } from './target-results.ts';
 
-const SURROGATES_TITLE = 'Searching surrogates of this series';
+const SURROGATES_TITLE = 'False alarms';
 
 type CacheName = 'sines' | 'singles' | 'falseAlarms' | 'depthLosses';
 type CacheValue<N extends CacheName> = BoundedValue<N>;
@@ -113,7 +113,7 @@ export function createSignalResults(deps: {
   return {
     sines: (target) => {
       const key = sinesKey(target);
-      const report = runs.progressOf(key, 'Lomb-Scargle');
+      const report = runs.progressOf(key, 'Lomb-Scargle', 'sines');
       return cached('sines', key, () =>
         onSeries(target, (series) => {
           const job = { key, series: undetrended(series), settings: DEFAULT_LOMB_SCARGLE };
@@ -133,7 +133,7 @@ export function createSignalResults(deps: {
     falseAlarms: async (target, priority = 'now') => {
       const key = falseAlarmKey(target);
       const run = runKey(key, priority);
-      const report = priority === 'sweep' ? () => undefined : runs.progressOf(key, SURROGATES_TITLE);
+      const report = priority === 'sweep' ? () => undefined : runs.progressOf(key, SURROGATES_TITLE, 'surrogates');
       const found = await cached('falseAlarms', key, () =>
         onSeries(
           target,

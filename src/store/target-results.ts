@@ -82,7 +82,7 @@ export function createTargetResults(deps: TargetResultsDeps): TargetResults {
     }
     const task = jobs.searchBox(
       { key, series: seriesOf(series), settings: searchSettingsOf(target) },
-      priority === 'sweep' ? () => undefined : runs.progressOf(key, 'Box search'),
+      priority === 'sweep' ? () => undefined : runs.progressOf(key, 'Box search', 'periods'),
       priority,
     );
     const value = await settle(runKey(key, priority), task, key);

@@ -1,5 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import type { SearchSeries } from '../../src/contract/search-contract.ts';
+import { relatePeriods } from '../../workers/search/peak-relation.ts';
+import { windowFrequencies } from '../../workers/search/window-frequencies.ts';
 import { createLehmer } from '../demo/lehmer.mjs';
 import { makeBoxSeries, searchBox } from './search-box.ts';
 
@@ -63,9 +65,22 @@ describe('signals of a search', () => {
     const nights = { ...whole, time: pick(whole.time), flux: pick(whole.flux), error: pick(whole.error) };
     const { peaks } = await searchBox(nights, SETTINGS);
     expect(near(peaks[0]!.periodDays, 2.71, 0.01)).toBe(true);
-    expect(peaks[0]!.relatives.some(({ relation }) => relation === 'daily alias' || relation === 'window alias')).toBe(
-      true,
-    );
+    const aliases = [1, 2].flatMap((k) => [1 / (1 / 2.71 + k), 1 / Math.abs(1 / 2.71 - k)]);
+    for (const other of peaks.slice(1))
+      for (const alias of aliases) expect(near(other.periodDays, alias, 0.003)).toBe(false);
+  });
+
+  it('names ratios and aliases by the period and the spectral window', () => {
+    const main = { periodDays: 2.71, epochDays: 1, durationDays: 0.16 };
+    const nights = Float64Array.from({ length: 3000 }, (_, i) => Math.floor(i / 50) + (i % 50) * 0.007);
+    const sampling = { spanDays: 60, windowFrequencies: windowFrequencies(nights) };
+    const relationOf = (periodDays: number) => relatePeriods(main, { ...main, periodDays }, sampling)?.relation;
+    expect(sampling.windowFrequencies[0]).toBeCloseTo(1, 1);
+    expect(relationOf(5.42)).toBe('2P');
+    expect(relationOf(2.71 / 3)).toBe('P/3');
+    expect(relationOf(2.71 * 1.5)).toBe('commensurate');
+    expect(relationOf(1 / (1 / 2.71 + 1))).toBe('daily alias');
+    expect(relationOf(2.71 * 1.37)).toBeUndefined();
   });
 });
 

@@ -39,24 +39,6 @@ export function measureEvents(
   return { depth, depthError, signalToNoise: depth / depthError, pointsInside, eventCount };
 }
 
-/** Weight, weighted flux and number of points from one time to another, both days after the first point. */
-export interface SpanSums {
-  readonly weight: number;
-  readonly weighted: number;
-  readonly points: number;
-}
-
-export function sumSpan(work: BoxWork, from: number, to: number): SpanSums {
-  const { before } = work;
-  const first = firstAtOrAfter(work, from);
-  const end = Math.max(first, firstAtOrAfter(work, to));
-  return {
-    weight: before[2 * end]! - before[2 * first]!,
-    weighted: before[2 * end + 1]! - before[2 * first + 1]!,
-    points: end - first,
-  };
-}
-
 function firstAtOrAfter({ lookup, cellsPerDay, elapsed, weight }: BoxWork, time: number): number {
   if (time <= 0) return 0;
   const n = weight.length;

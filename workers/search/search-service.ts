@@ -7,9 +7,9 @@ import { transferArrays } from '../transfer-arrays.ts';
 import { maskSignals } from './mask-signals.ts';
 import { searchBoxPart } from './search-part.ts';
 import { computeLombScargle } from './sines/lomb-scargle.ts';
-import { findSingleEvents } from './singles/find-singles.ts';
-import { findPeriodOfSingle } from './singles/period-of-single.ts';
-import { findPeriodsFromTimes } from './singles/periods-from-times.ts';
+import { findPeriodOfSingle } from './singles/find-period-of-single.ts';
+import { findPeriodsFromTimes } from './singles/find-periods-from-times.ts';
+import { findSingleEvents } from './singles/find-single-events.ts';
 import { summariseBoxSearch } from './summarise.ts';
 import { joinSurrogates, searchSurrogates } from './surrogates.ts';
 

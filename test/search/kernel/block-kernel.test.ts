@@ -116,7 +116,7 @@ describe('blocks of trials', () => {
     const blocks = planBlocks(plan, time.at(-1)! - time[0]!, time.length);
     expect(blocks[0]!.first).toBe(0);
     expect(blocks.at(-1)!.end).toBe(plan.periods.length);
-    blocks.forEach((block, i) => i > 0 && expect(block.first).toBe(blocks[i - 1]!.end));
+    for (let i = 1; i < blocks.length; i += 1) expect(blocks[i]!.first).toBe(blocks[i - 1]!.end);
     expect(blocks.every(({ first, end }) => end > first)).toBe(true);
   });
 });

@@ -2,7 +2,7 @@ import { sumAtFrequencies } from './sums-at-frequencies.ts';
 import type { WeightedSeries } from './weighted-series.ts';
 
 /** Below this part of its largest value the determinant of a frequency's sine and cosine has no digits. */
-const LEAST_DETERMINANT = 1e-12;
+const LEAST_DETERMINANT = 1e-7;
 
 /** The weighted sums of one frequency. */
 interface Sums {

@@ -1,0 +1,69 @@
+import {
+  BOTH_SIDES,
+  fitTemplate,
+  makeTemplateFit,
+  SHOULDER_DURATIONS,
+  significanceOf,
+  solveTemplate,
+  type Template,
+  type TemplateFit,
+} from './fit-template.ts';
+import { countPoints, makeSeriesSums, type SeriesSums } from './series-sums.ts';
+import { boundWithin, stretchAround } from './stretches.ts';
+import { longestGapDays } from './template-search.ts';
+import type { UsablePoints } from './usable-points.ts';
+
+/** The window leaves a level for templates of up to so many of the candidate's durations. */
+export const LONGEST_FACTOR = 1.6;
+
+/** A template at a place. */
+export interface PlacedTemplate extends Template {
+  /** Days, as `x`. */
+  readonly centre: number;
+}
+
+/** The points around a candidate, on running sums of their own: exact, and every template is held to the same points. */
+export interface Neighbourhood {
+  readonly sums: SeriesSums;
+  /** Whether the candidate has a level on either side, so that a slope is fitted as well. */
+  readonly hasSlope: boolean;
+}
+
+/** The points that a template of up to 1.6 times the candidate's duration needs, cut at the gaps around it. */
+export function cutNeighbourhood(points: UsablePoints, { centre, ...template }: PlacedTemplate): Neighbourhood {
+  const reach = (0.5 + SHOULDER_DURATIONS) * LONGEST_FACTOR * template.durationDays;
+  const { from, end } = stretchAround(points.x, centre, reach, longestGapDays(template.durationDays));
+  const sums = makeSeriesSums({
+    ...points,
+    anchorDays: points.anchorDays + centre,
+    x: points.x.subarray(from, end).map((x) => x - centre),
+    y: points.y.subarray(from, end),
+    weight: points.weight.subarray(from, end),
+  });
+  const fit = makeTemplateFit();
+  fitTemplate(sums, { from: 0, end: end - from }, 0, template, fit);
+  return { sums, hasSlope: fit.sides === BOTH_SIDES };
+}
+
+const fit = makeTemplateFit();
+
+/**
+ * Chi-square that a template takes away from level and slope alone, fitted to the whole neighbourhood: twice the log
+ * of the likelihood ratio. 0 for a bump, or fewer than two points inside. `centre` is counted from the candidate's.
+ */
+export function improvementOf({ sums, hasSlope }: Neighbourhood, placed: PlacedTemplate): number {
+  const { x } = sums.points;
+  const first = boundWithin(x, placed.centre - placed.durationDays / 2, 0, x.length);
+  const last = boundWithin(x, placed.centre + placed.durationDays / 2, first, x.length);
+  if (countPoints(sums.before, first, last) < 2) return 0;
+  solveTemplate(sums, 0, x.length, placed.centre, placed, hasSlope, fit);
+  const significance = significanceOf(fit);
+  return significance > 0 ? significance * significance : 0;
+}
+
+/** The fit by the rule of the search: level and slope from two durations on either side. */
+export function fitPlaced({ sums }: Neighbourhood, placed: PlacedTemplate): TemplateFit {
+  const found = makeTemplateFit();
+  fitTemplate(sums, { from: 0, end: sums.points.x.length }, placed.centre, placed, found);
+  return found;
+}
