@@ -6,6 +6,7 @@ import { fileResult, type ResultsStore, withEntry, withoutEntry } from './result
 export interface RunOnce {
   /** Whoever asks while it runs waits for the same answer. */
   once<T>(key: string, run: () => Promise<T>): Promise<T>;
+  isUnderway(key: string): boolean;
   /** The value of a task; undefined when it failed (the sentence is filed under `failureKey`) or was cancelled. */
   settle<T>(key: string, task: RunningTask<T>, failureKey?: string): Promise<T | undefined>;
   /** Shows a job's progress under its title until it ends. */
@@ -42,6 +43,7 @@ export function createRunOnce(results: ResultsStore, now: () => number): RunOnce
       underway.set(key, promise);
       return promise;
     },
+    isUnderway: (key) => underway.has(key),
     async settle<T>(key: string, task: RunningTask<T>, failureKey = key) {
       cancels.set(key, task.cancel);
       const outcome: Outcome<T> = await task.promise;

@@ -104,12 +104,15 @@ export function createTargetResults(deps: TargetResultsDeps): TargetResults {
     if (failure !== undefined) summarise(target, failedSummary(key, failure));
   }
 
+  /** A sweep waits for what runs for the screen anyway; the screen never waits for a sweep. */
+  const runFor = (key: string, priority: TaskPriority): string => (runs.isUnderway(key) ? key : runKey(key, priority));
+
   function lightCurve(target: Target, priority: TaskPriority = 'now') {
     const key = lightCurveKey(target);
     const known = results.getState().lightCurves.get(key);
     return known !== undefined
       ? Promise.resolve(known)
-      : once(runKey(key, priority), () => readLightCurve(target, key, priority));
+      : once(runFor(key, priority), () => readLightCurve(target, key, priority));
   }
 
   function prepared(target: Target, priority: TaskPriority = 'now') {
@@ -117,7 +120,7 @@ export function createTargetResults(deps: TargetResultsDeps): TargetResults {
     const known = results.getState().prepared.get(key);
     return known !== undefined
       ? Promise.resolve(known)
-      : once(runKey(key, priority), () => prepareTarget(target, key, priority));
+      : once(runFor(key, priority), () => prepareTarget(target, key, priority));
   }
 
   function search(target: Target, priority: TaskPriority = 'now') {
@@ -125,7 +128,7 @@ export function createTargetResults(deps: TargetResultsDeps): TargetResults {
     const known = results.getState().searches.get(key);
     return known !== undefined
       ? Promise.resolve(known)
-      : once(runKey(key, priority), () => searchTarget(target, key, priority));
+      : once(runFor(key, priority), () => searchTarget(target, key, priority));
   }
 
   return {

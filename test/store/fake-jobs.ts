@@ -1,5 +1,6 @@
 import { cancelled, done, type Outcome, type Progress } from '../../src/contract/outcome.ts';
 import type { BoxSearchResult } from '../../src/contract/search-contract.ts';
+import type { CandidatePeriod } from '../../src/contract/single-events-contract.ts';
 import type { Jobs, RunningTask } from '../../src/jobs/jobs.ts';
 import { createCheckpoint } from '../../workers/checkpoint.ts';
 import { prepareSeries } from '../../workers/prepare/prepare.ts';
@@ -12,9 +13,13 @@ export interface HeldSearch {
   cancelled: boolean;
 }
 
-/** Real reading and preparation, in this thread; searches end when the test says so, with a result of the given key. */
-export function createFakeJobs(): { jobs: Jobs; searches: HeldSearch[] } {
+/**
+ * Real reading and preparation, in this thread; searches end when the test says so, with a result of the given key;
+ * periods are those that the test sets.
+ */
+export function createFakeJobs(): { jobs: Jobs; searches: HeldSearch[]; periods: CandidatePeriod[] } {
   const searches: HeldSearch[] = [];
+  const periods: CandidatePeriod[] = [];
   const jobs: Jobs = {
     readFile: (fileName, bytes, mapping) => readFile({ jobId: 'r', fileName, bytes, mapping }),
     prepare: (job) => ({
@@ -45,13 +50,16 @@ export function createFakeJobs(): { jobs: Jobs; searches: HeldSearch[] } {
     searchSurrogates: notUsed,
     lombScargle: notUsed,
     findSingleEvents: notUsed,
-    periodsFromTimes: notUsed,
+    periodsFromTimes: ({ key }) => ({
+      promise: Promise.resolve(done({ key, candidates: [...periods], considered: periods.length, depth: 0.001 })),
+      cancel: () => undefined,
+    }),
     periodOfSingle: notUsed,
     findCommonModes: notUsed,
     measureDepthLoss: notUsed,
     dispose: () => undefined,
   };
-  return { jobs, searches };
+  return { jobs, searches, periods };
 }
 
 const notUsed = (): RunningTask<never> => ({ promise: Promise.resolve(cancelled), cancel: () => undefined });

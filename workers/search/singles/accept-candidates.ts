@@ -24,6 +24,8 @@ export interface Acceptance {
   readonly accepted: AcceptedEvent[];
   /** Without the accepted events and lone points; the same object when nothing was taken out. */
   readonly points: UsablePoints;
+  /** Where points were taken out this time, as `x`. */
+  readonly changedAt: readonly number[];
 }
 
 /**
@@ -39,6 +41,7 @@ export function acceptCandidates(
 ): Acceptance {
   const accepted = [...earlier];
   let points = start;
+  const changedAt: number[] = [];
   let refined = 0;
   for (const candidate of rankCandidates(searches)) {
     if (refined === MOST_REFINED) break;
@@ -47,13 +50,16 @@ export function acceptCandidates(
     refined += 1;
     const judged = judge(all, points, searches, threshold, placed);
     if (judged === undefined) continue;
-    if (typeof judged === 'number') points = withoutWeight(points, judged, judged + 1);
-    else if (!accepted.some((other) => overlaps(other.placed, judged.placed))) {
+    if (typeof judged === 'number') {
+      changedAt.push(points.x[judged]!);
+      points = withoutWeight(points, judged, judged + 1);
+    } else if (!accepted.some((other) => overlaps(other.placed, judged.placed))) {
+      changedAt.push(judged.placed.centre);
       accepted.push(judged);
       points = withoutEvent(points, judged.placed);
     }
   }
-  return { accepted, points };
+  return { accepted, points, changedAt };
 }
 
 function rankCandidates(searches: readonly DurationSearch[]): Candidate[] {

@@ -1,5 +1,5 @@
 import { measureFilterNoise } from './filter-noise.ts';
-import { BOTH_SIDES, fitTemplate, makeTemplateFit, NO_SIDE, type Template } from './fit-template.ts';
+import { fitTemplate, makeTemplateFit, NO_SIDE, type Template } from './fit-template.ts';
 import { makeSeriesSums } from './series-sums.ts';
 import { slideTemplate } from './slide-template.ts';
 import { findStretches, type Stretch, stretchAt } from './stretches.ts';
@@ -106,7 +106,7 @@ export function measureMeanDepth(
   let sum = 0;
   for (const time of times) {
     const stretch = stretchAt(points.x, stretches, time);
-    fitTemplate(sums, stretch, time, { durationDays, ingressDays: 0 }, fit, BOTH_SIDES);
+    fitTemplate(sums, stretch, time, { durationDays, ingressDays: 0 }, fit);
     information += fit.information;
     sum += fit.information * fit.depth;
   }

@@ -11,7 +11,7 @@ import { maskSignals } from '../mask-signals.ts';
 import { type AcceptedEvent, acceptCandidates } from './accept-candidates.ts';
 import { chooseEventDurations } from './event-durations.ts';
 import { makeSeriesSums } from './series-sums.ts';
-import { type DurationSearch, searchDuration } from './template-search.ts';
+import { type DurationSearch, searchAgain, searchDuration } from './template-search.ts';
 import { selectUsablePoints, type UsablePoints } from './usable-points.ts';
 
 const MOST_EVENTS = 20;
@@ -56,34 +56,39 @@ async function searchRounds(
 ): Promise<Found | undefined> {
   let accepted: AcceptedEvent[] = [];
   let points = all;
-  let searched: DurationSearch[] = [];
+  let near: readonly number[] | undefined;
+  let searches: readonly DurationSearch[] = [];
   for (let round = 0; round < MOST_ROUNDS; round += 1) {
-    const searches = await searchDurations(points, durations, threshold, checkpoint, round);
-    if (searches === undefined) return undefined;
-    if (round === 0) searched = searches.filter(({ noise }) => noise !== undefined);
-    const next = acceptCandidates(all, points, searches, threshold, accepted);
-    if (next.points === points) break;
+    const sums = makeSeriesSums(points);
+    const search = (durationDays: number, i: number): DurationSearch =>
+      near === undefined
+        ? searchDuration(sums, durationDays, threshold)
+        : searchAgain(sums, searches[i]!, threshold, near);
+    const found = await searchDurations(durations, search, checkpoint, round);
+    if (found === undefined) return undefined;
+    const next = acceptCandidates(all, points, found, threshold, accepted);
+    searches = found;
     accepted = next.accepted;
     points = next.points;
+    near = next.changedAt;
+    if (near.length === 0) break;
   }
   const strongest = accepted.map(({ event }) => event).sort((a, b) => b.signalToNoise - a.signalToNoise);
   return {
     events: strongest.slice(0, MOST_EVENTS),
-    durationsDays: searched.map(({ durationDays }) => durationDays),
+    durationsDays: searches.filter(({ noise }) => noise !== undefined).map(({ durationDays }) => durationDays),
   };
 }
 
 async function searchDurations(
-  points: UsablePoints,
   durations: readonly number[],
-  threshold: number,
+  search: (durationDays: number, i: number) => DurationSearch,
   checkpoint: Checkpoint,
   round: number,
 ): Promise<DurationSearch[] | undefined> {
-  const sums = makeSeriesSums(points);
   const searches: DurationSearch[] = [];
   for (const [i, durationDays] of durations.entries()) {
-    searches.push(searchDuration(sums, durationDays, threshold));
+    searches.push(search(durationDays, i));
     const progress = round * durations.length + i + 1;
     if (checkpoint.isDue() && !(await checkpoint.pause(progress, MOST_ROUNDS * durations.length))) return undefined;
   }

@@ -45,6 +45,14 @@ const ingress = makeMoments();
 const floor = makeMoments();
 const egress = makeMoments();
 
+/** Indices of the points of a fit: its window is `from` up to `end`, the event in it `first` up to `last`. */
+export interface FitWindow {
+  from: number;
+  first: number;
+  last: number;
+  end: number;
+}
+
 /**
  * Weighted least squares of level, slope and depth of a template at `centre`, over the event and two durations on
  * either side, within one stretch: no level is taken across a gap that ends it. Where a side holds fewer points than
@@ -52,7 +60,6 @@ const egress = makeMoments();
  * with less than a third of its points, or without a level, is not fitted.
  *
  * @param centre days, as `x` of the points
- * @param sidesWanted leaves a side out on purpose
  */
 export function fitTemplate(
   sums: SeriesSums,
@@ -60,16 +67,29 @@ export function fitTemplate(
   centre: number,
   template: Template,
   into: TemplateFit,
-  sidesWanted: number = BOTH_SIDES,
 ): void {
-  const { x, cadenceDays } = sums.points;
+  const { x } = sums.points;
   const half = template.durationDays / 2;
-  const shoulder = SHOULDER_DURATIONS * template.durationDays;
-  const from = boundWithin(x, centre - half - shoulder, stretch.from, stretch.end);
-  const first = boundWithin(x, centre - half, from, stretch.end);
-  const last = boundWithin(x, centre + half, first, stretch.end);
-  const end = boundWithin(x, centre + half + shoulder, last, stretch.end);
-  const expected = template.durationDays / cadenceDays;
+  const reach = half + SHOULDER_DURATIONS * template.durationDays;
+  searched.from = boundWithin(x, centre - reach, stretch.from, stretch.end);
+  searched.first = boundWithin(x, centre - half, searched.from, stretch.end);
+  searched.last = boundWithin(x, centre + half, searched.first, stretch.end);
+  searched.end = boundWithin(x, centre + reach, searched.last, stretch.end);
+  fitWindow(sums, searched, centre, template, BOTH_SIDES, into);
+}
+
+const searched: FitWindow = { from: 0, first: 0, last: 0, end: 0 };
+
+/** The same where the window is known. @param sidesWanted leaves a side out on purpose */
+export function fitWindow(
+  sums: SeriesSums,
+  { from, first, last, end }: FitWindow,
+  centre: number,
+  template: Template,
+  sidesWanted: number,
+  into: TemplateFit,
+): void {
+  const expected = template.durationDays / sums.points.cadenceDays;
   const leastSide = Math.max(LEAST_POINTS, LEAST_SIDE * expected);
   const sides =
     (countPoints(sums.before, from, first) >= leastSide ? BEFORE : 0) |

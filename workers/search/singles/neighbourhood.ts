@@ -1,3 +1,4 @@
+import { MAD_TO_SIGMA, median, medianAbsoluteDeviation } from '../../../src/core/robust-statistics.ts';
 import {
   BOTH_SIDES,
   fitTemplate,
@@ -15,6 +16,7 @@ import type { UsablePoints } from './usable-points.ts';
 
 /** The window leaves a level for templates of up to so many of the candidate's durations. */
 export const LONGEST_FACTOR = 1.6;
+const BUMP_SIGMA = 5;
 
 /** A template at a place. */
 export interface PlacedTemplate extends Template {
@@ -29,20 +31,29 @@ export interface Neighbourhood {
   readonly hasSlope: boolean;
 }
 
-/** The points that a template of up to 1.6 times the candidate's duration needs, cut at the gaps around it. */
+/**
+ * The points that a template of up to 1.6 times the candidate's duration needs, cut at the gaps around it. Points beside
+ * the candidate that stand far above the others there (flares, particle hits) have no weight: they would raise the level
+ * and make a dip of what lies between.
+ */
 export function cutNeighbourhood(points: UsablePoints, { centre, ...template }: PlacedTemplate): Neighbourhood {
   const reach = (0.5 + SHOULDER_DURATIONS) * LONGEST_FACTOR * template.durationDays;
   const { from, end } = stretchAround(points.x, centre, reach, longestGapDays(template.durationDays));
-  const sums = makeSeriesSums({
-    ...points,
-    anchorDays: points.anchorDays + centre,
-    x: points.x.subarray(from, end).map((x) => x - centre),
-    y: points.y.subarray(from, end),
-    weight: points.weight.subarray(from, end),
-  });
-  const fit = makeTemplateFit();
+  const x = points.x.subarray(from, end).map((value) => value - centre);
+  const y = points.y.subarray(from, end);
+  const weight = points.weight.slice(from, end);
+  leaveOutBumps(x, y, weight, template.durationDays / 2);
+  const sums = makeSeriesSums({ ...points, anchorDays: points.anchorDays + centre, x, y, weight });
   fitTemplate(sums, { from: 0, end: end - from }, 0, template, fit);
   return { sums, hasSlope: fit.sides === BOTH_SIDES };
+}
+
+function leaveOutBumps(x: Float64Array, y: Float64Array, weight: Float64Array, half: number): void {
+  const beside = y.filter((_, i) => weight[i]! > 0 && Math.abs(x[i]!) > half);
+  const middle = median(beside);
+  const highest = middle + BUMP_SIGMA * medianAbsoluteDeviation(beside, middle) * MAD_TO_SIGMA;
+  if (!(highest > middle)) return;
+  for (let i = 0; i < x.length; i += 1) if (y[i]! > highest && Math.abs(x[i]!) > half) weight[i] = 0;
 }
 
 const fit = makeTemplateFit();

@@ -2,21 +2,26 @@ import {
   AFTER,
   BEFORE,
   BOTH_SIDES,
-  fitTemplate,
+  type FitWindow,
+  fitWindow,
   makeTemplateFit,
   NO_SIDE,
+  SHOULDER_DURATIONS,
   significanceOf,
   type Template,
 } from './fit-template.ts';
 import type { SeriesSums } from './series-sums.ts';
-import type { Stretch } from './stretches.ts';
+import { advanceTo, type Stretch } from './stretches.ts';
 
 /** Steps of a sliding template, in its duration: at worst a twentieth of it is missed, and refinement finds it. */
 const STRIDE = 0.1;
-/** There is nothing to find between points: at least this part of a cadence is stepped. */
-const LEAST_STRIDE_CADENCES = 0.5;
+/** A box holds other points only when it has moved by a cadence. */
+const LEAST_STRIDE_CADENCES = 1;
 /** One place in so many also tells what a level from one side alone would have given. */
 export const ONE_SIDE_EVERY = 4;
+
+/** What was taken out changes the fits within so many durations of it: half the event and its shoulder. */
+const NEAR_DURATIONS = 3;
 
 /** What one template gave along the series. */
 export interface FilterOutput {
@@ -31,8 +36,17 @@ export interface FilterOutput {
   readonly oneSided: Float64Array;
 }
 
-/** Fits a template all along the series: at every tenth of its duration, but not finer than half a cadence. */
-export function slideTemplate(sums: SeriesSums, stretches: readonly Stretch[], template: Template): FilterOutput {
+/**
+ * Fits a template all along the series: at every tenth of its duration, but not finer than the cadence.
+ *
+ * @param near only places within three durations of these are tried; undefined: all
+ */
+export function slideTemplate(
+  sums: SeriesSums,
+  stretches: readonly Stretch[],
+  template: Template,
+  near?: readonly number[],
+): FilterOutput {
   const { x, cadenceDays } = sums.points;
   const stride = Math.max(STRIDE * template.durationDays, LEAST_STRIDE_CADENCES * cadenceDays);
   const places = stretches.map(({ from, end }) => Math.floor((x[end - 1]! - x[from]!) / stride) + 1);
@@ -45,7 +59,7 @@ export function slideTemplate(sums: SeriesSums, stretches: readonly Stretch[], t
     sides: new Uint8Array(most),
     oneSided: new Float64Array(most),
   };
-  stretches.forEach((stretch, i) => void slideAlong(sums, stretch, template, stride, places[i]!, taken));
+  stretches.forEach((stretch, i) => void slideAlong(sums, stretch, template, stride, places[i]!, near, taken));
   return {
     template,
     strideDays: stride,
@@ -67,6 +81,7 @@ interface Taken {
 
 const fit = makeTemplateFit();
 const sideFit = makeTemplateFit();
+const window: FitWindow = { from: 0, first: 0, last: 0, end: 0 };
 
 function slideAlong(
   sums: SeriesSums,
@@ -74,21 +89,40 @@ function slideAlong(
   template: Template,
   stride: number,
   places: number,
+  near: readonly number[] | undefined,
   taken: Taken,
 ): void {
   const start = sums.points.x[stretch.from]!;
+  const reach = NEAR_DURATIONS * template.durationDays;
+  window.from = window.first = window.last = window.end = stretch.from;
   for (let place = 0; place < places; place += 1) {
     const centre = start + place * stride;
-    fitTemplate(sums, stretch, centre, template, fit);
+    if (near !== undefined && !isNear(centre, near, reach)) continue;
+    moveWindow(sums.points.x, stretch, centre, template.durationDays);
+    fitWindow(sums, window, centre, template, BOTH_SIDES, fit);
     if (fit.sides === NO_SIDE) continue;
     taken.centres[taken.count] = centre;
     taken.significance[taken.count] = significanceOf(fit);
     taken.sides[taken.count] = fit.sides;
     taken.count += 1;
     if (fit.sides !== BOTH_SIDES || taken.count % ONE_SIDE_EVERY !== 0) continue;
-    fitTemplate(sums, stretch, centre, template, sideFit, taken.count % (2 * ONE_SIDE_EVERY) === 0 ? BEFORE : AFTER);
+    fitWindow(sums, window, centre, template, taken.count % (2 * ONE_SIDE_EVERY) === 0 ? BEFORE : AFTER, sideFit);
     if (sideFit.sides === NO_SIDE) continue;
     taken.oneSided[taken.oneSidedCount] = significanceOf(sideFit);
     taken.oneSidedCount += 1;
   }
+}
+
+function moveWindow(x: Float64Array, { end }: Stretch, centre: number, durationDays: number): void {
+  const half = durationDays / 2;
+  const reach = half + SHOULDER_DURATIONS * durationDays;
+  window.from = advanceTo(x, centre - reach, window.from, end);
+  window.first = advanceTo(x, centre - half, window.first, end);
+  window.last = advanceTo(x, centre + half, window.last, end);
+  window.end = advanceTo(x, centre + reach, window.end, end);
+}
+
+function isNear(centre: number, near: readonly number[], reach: number): boolean {
+  for (let i = 0; i < near.length; i += 1) if (Math.abs(centre - near[i]!) <= reach) return true;
+  return false;
 }

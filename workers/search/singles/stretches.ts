@@ -53,3 +53,10 @@ export function stretchAround(x: Float64Array, centre: number, reachDays: number
   while (end < x.length && x[end]! - x[end - 1]! <= gapDays && x[end]! - centre <= reachDays) end += 1;
   return { from, end };
 }
+
+/** The same where it lies not far after `from`. */
+export function advanceTo(x: Float64Array, time: number, from: number, end: number): number {
+  let i = from;
+  while (i < end && x[i]! < time) i += 1;
+  return i;
+}

@@ -31,13 +31,33 @@ export interface DurationSearch {
  */
 export function searchDuration(sums: SeriesSums, durationDays: number, threshold: number): DurationSearch {
   const stretches = findStretches(sums.points.x, longestGapDays(durationDays));
-  const box = slideTemplate(sums, stretches, { durationDays, ingressDays: 0 });
+  const box = slideTemplate(sums, stretches, boxOf(durationDays));
   const noise = measureFilterNoise(box);
   if (noise === undefined) return { durationDays, noise, candidates: [] };
-  const trapezoid = slideTemplate(sums, stretches, { durationDays, ingressDays: INGRESS_FRACTION * durationDays });
-  const candidates = [box, trapezoid].flatMap((output) => findMaxima(output, noise, threshold));
+  const trapezoid = slideTemplate(sums, stretches, trapezoidOf(durationDays));
+  return { durationDays, noise, candidates: [box, trapezoid].flatMap((one) => findMaxima(one, noise, threshold)) };
+}
+
+/** The same again near places where points were taken out; the noise stays what it was. */
+export function searchAgain(
+  sums: SeriesSums,
+  { durationDays, noise }: DurationSearch,
+  threshold: number,
+  near: readonly number[],
+): DurationSearch {
+  if (noise === undefined) return { durationDays, noise, candidates: [] };
+  const stretches = findStretches(sums.points.x, longestGapDays(durationDays));
+  const candidates = [boxOf(durationDays), trapezoidOf(durationDays)].flatMap((template) =>
+    findMaxima(slideTemplate(sums, stretches, template, near), noise, threshold),
+  );
   return { durationDays, noise, candidates };
 }
+
+const boxOf = (durationDays: number): Template => ({ durationDays, ingressDays: 0 });
+const trapezoidOf = (durationDays: number): Template => ({
+  durationDays,
+  ingressDays: INGRESS_FRACTION * durationDays,
+});
 
 export const longestGapDays = (durationDays: number): number => LONGEST_GAP_DURATIONS * durationDays;
 
