@@ -1,14 +1,17 @@
 import { describe, expect, it } from 'vitest';
 import { iteratedBiweightLocation } from '../../src/core/biweight.ts';
 import { createCheckpoint } from '../../workers/checkpoint.ts';
-import { fitBiweightTrend } from '../../workers/prepare/biweight-trend.ts';
+import { locateByBiweight } from '../../workers/prepare/detrend/biweight.ts';
+import { fitSlidingTrend } from '../../workers/prepare/detrend/sliding-trend.ts';
 import { seedRandom } from '../reference/search/seeded-series.ts';
 import { makeColumn, makeJob, makeLightCurve, prepare, sentenceOf } from './light-curve.ts';
 
 async function trendOf(time: Float64Array, flux: Float64Array, windowDays: number, weight?: Uint8Array) {
   const hasWeight = weight ?? new Uint8Array(time.length).fill(1);
-  const trend = await fitBiweightTrend(
-    { time, flux, hasWeight, windowDays },
+  const trend = await fitSlidingTrend(
+    { time, flux, hasWeight, splits: [], protectedEvents: [] },
+    windowDays,
+    locateByBiweight,
     createCheckpoint(() => false),
   );
   return trend!;

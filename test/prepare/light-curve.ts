@@ -5,7 +5,13 @@ import { createCheckpoint } from '../../workers/checkpoint.ts';
 import { prepareSeries } from '../../workers/prepare/prepare.ts';
 import { expectDone } from '../search/search-box.ts';
 
-export const PLAIN: Recipe = { ...DEFAULT_RECIPE, clip: { kind: 'none' }, detrend: { kind: 'none' } };
+export const PLAIN: Recipe = {
+  ...DEFAULT_RECIPE,
+  clip: { kind: 'none' },
+  detrend: { kind: 'none' },
+  maskFlares: false,
+  splitAtDrops: false,
+};
 
 export function makeColumn(flux: ArrayLike<number>, rest: Partial<FluxColumn> = {}): FluxColumn {
   return {
@@ -44,6 +50,8 @@ export function makeJob(lightCurve: LightCurve, recipe: Partial<Recipe>, rest: P
     excluded: [],
     protectedEvents: [],
     protectedIntervals: [],
+    instrumentSpans: [],
+    commonModes: undefined,
     ...rest,
   };
 }

@@ -2,6 +2,8 @@ import type { PrepareWorker } from '../../src/contract/prepare-contract.ts';
 import { createCheckpoint } from '../checkpoint.ts';
 import { createRunningJobs } from '../running-jobs.ts';
 import { transferArrays } from '../transfer-arrays.ts';
+import { findCommonModes } from './common-modes.ts';
+import { measureDepthLoss } from './depth-loss.ts';
 import { prepareSeries } from './prepare.ts';
 
 /** The preparing worker without its thread. */
@@ -12,6 +14,9 @@ export function createPrepareService(): PrepareWorker {
       jobs.run(job.jobId, async (isCancelled) =>
         transferArrays(await prepareSeries(job, createCheckpoint(isCancelled))),
       ),
+    findCommonModes: async (job) => transferArrays(findCommonModes(job)),
+    measureDepthLoss: (job) =>
+      jobs.run(job.jobId, (isCancelled) => measureDepthLoss(job, createCheckpoint(isCancelled))),
     cancel: async (jobId) => jobs.cancel(jobId),
   };
 }

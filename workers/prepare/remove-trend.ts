@@ -1,11 +1,10 @@
 import type { Clip, Detrend } from '../../src/core/recipe.ts';
 import type { Checkpoint } from '../checkpoint.ts';
-import { fitBiweightTrend } from './biweight-trend.ts';
+import { fitTrend } from './detrend/detrenders.ts';
+import type { TrendInput } from './detrend/trend-input.ts';
 import { clipBySigma } from './sigma-clip.ts';
 
-export interface TrendJob {
-  /** Days, ascending, length n. */
-  readonly time: Float64Array;
+export interface TrendJob extends Pick<TrendInput, 'time' | 'splits' | 'protectedEvents'> {
   /** Relative, length n. */
   readonly raw: Float64Array;
   readonly detrend: Detrend;
@@ -31,12 +30,13 @@ export interface Trended {
  * @returns a sentence when the trend cannot be divided by, undefined when cancelled
  */
 export async function removeTrend(job: TrendJob, checkpoint: Checkpoint): Promise<Trended | string | undefined> {
-  const { time, raw, clip, isProtected } = job;
+  const { time, raw, clip, isProtected, splits, protectedEvents } = job;
   const kept = new Uint8Array(raw.length).fill(1);
   let trend: Float64Array | undefined;
   let flux = raw;
   for (let pass = 0; pass < 2; pass += 1) {
-    trend = await fitTrend(job, kept, checkpoint);
+    const hasWeight = kept.map((keep, i) => (keep === 1 && isProtected[i] === 0 ? 1 : 0));
+    trend = await fitTrend(job.detrend, { time, flux: raw, hasWeight, splits, protectedEvents }, checkpoint);
     if (trend === undefined) return undefined;
     const low = trend.findIndex((value) => !job.isSubtracted && !(value > 0));
     if (low >= 0)
@@ -47,16 +47,6 @@ export async function removeTrend(job: TrendJob, checkpoint: Checkpoint): Promis
   return { trend: trend ?? new Float64Array(raw.length).fill(1), flux, kept };
 }
 
-async function fitTrend(
-  { time, raw, detrend, isProtected }: TrendJob,
-  kept: Uint8Array,
-  checkpoint: Checkpoint,
-): Promise<Float64Array | undefined> {
-  if (detrend.kind === 'none') return new Float64Array(raw.length).fill(1);
-  const hasWeight = kept.map((keep, i) => (keep === 1 && isProtected[i] === 0 ? 1 : 0));
-  return fitBiweightTrend({ time, flux: raw, hasWeight, windowDays: detrend.windowDays }, checkpoint);
-}
-
-function applyTrend(raw: Float64Array, trend: Float64Array, isSubtracted: boolean): Float64Array {
+export function applyTrend(raw: Float64Array, trend: Float64Array, isSubtracted: boolean): Float64Array {
   return raw.map((value, i) => (isSubtracted ? 1 + value - trend[i]! : value / trend[i]!));
 }
