@@ -69,7 +69,8 @@ function boxAliases({ search, ephemeris, prepared, case: chosen }: BenchSelectio
   const signal = search?.peaks.find((peak) => isSameSignal(ephemeris, peak, prepared?.spanDays ?? 0));
   return (signal?.relatives ?? []).map(({ periodDays, relation }) => ({
     periodDays,
-    label: relation,
+    // Aliases have names too long to stand side by side; the sheet has them.
+    label: relation.includes('P') ? relation : '',
     caseNumber: chosen?.number,
   }));
 }

@@ -27,7 +27,7 @@ export function SingleEvents() {
       {singles.events.length === 0 ? (
         <p className="quiet">No single dip stands out{target.search.masked?.length ? ' of what is not masked' : ''}.</p>
       ) : (
-        <table className="peaks">
+        <table className="peaks singles">
           <thead>
             <tr>
               <th scope="col">time /&nbsp;d</th>

@@ -67,13 +67,11 @@ export interface BoxPeak {
   readonly pointsInEvents: number;
 }
 
-/** How a peak hangs together with a stronger one. */
+/** How a peak hangs together with a stronger one: the ratio of their periods, an alias, or only the same events. */
 export type PeakRelation =
-  | 'P/3'
-  | 'P/2'
-  | '2P'
-  | '3P'
-  | 'commensurate'
+  | `${number}P`
+  | `P/${number}`
+  | `${number}P/${number}`
   | 'daily alias'
   | 'window alias'
   | 'same events';

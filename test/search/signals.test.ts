@@ -78,7 +78,7 @@ describe('signals of a search', () => {
     expect(sampling.windowFrequencies[0]).toBeCloseTo(1, 1);
     expect(relationOf(5.42)).toBe('2P');
     expect(relationOf(2.71 / 3)).toBe('P/3');
-    expect(relationOf(2.71 * 1.5)).toBe('commensurate');
+    expect(relationOf(2.71 * 1.5)).toBe('3P/2');
     expect(relationOf(1 / (1 / 2.71 + 1))).toBe('daily alias');
     expect(relationOf(2.71 * 1.37)).toBeUndefined();
   });

@@ -8,8 +8,6 @@ const MOST_DAILY = 3;
 /** Aliases are looked for within this many resolution elements 1/span. */
 const ALIAS_ELEMENTS = 1.5;
 
-const NAMED: Readonly<Record<string, PeakRelation>> = { '1/3': 'P/3', '1/2': 'P/2', '2/1': '2P', '3/1': '3P' };
-
 export interface Sampling {
   readonly spanDays: number;
   /** Per day, of the spectral window. */
@@ -31,10 +29,14 @@ function relateByRatio(main: Ephemeris, other: Ephemeris, spanDays: number) {
       if (above === below || divide(above, below)) continue;
       const periodDays = (main.periodDays * above) / below;
       if (!isSameSignal({ ...other, periodDays }, other, spanDays)) continue;
-      const relation = NAMED[`${above}/${below}`] ?? 'commensurate';
-      return { relation, reason: `Its period is ${above}/${below} of ${days(main.periodDays)}.` };
+      return { relation: nameOf(above, below), reason: `Its period is ${above}/${below} of ${days(main.periodDays)}.` };
     }
   return undefined;
+}
+
+function nameOf(above: number, below: number): PeakRelation {
+  if (below === 1) return `${above}P`;
+  return above === 1 ? `P/${below}` : `${above}P/${below}`;
 }
 
 /** Whether both share a divisor. */
