@@ -90,19 +90,22 @@ function SignalRows(props: {
                 <span className="visually-hidden">case {claimed.number}</span>
               </span>
             )}
+            {others > 0 && (
+              <button
+                type="button"
+                className="link more"
+                aria-expanded={isOpen}
+                aria-label={`${others} other ${others === 1 ? 'period' : 'periods'} of signal ${rank}`}
+                title={`${isOpen ? 'close' : 'show'} ${others} other ${others === 1 ? 'period' : 'periods'} of this signal`}
+                onClick={onOpen}
+              >
+                {isOpen ? '−' : '+'}
+                {others}
+              </button>
+            )}
           </>
         }
       />
-      {others > 0 && (
-        <tr className="more-row">
-          <td />
-          <td colSpan={7}>
-            <button type="button" className="link small" aria-expanded={isOpen} onClick={onOpen}>
-              {isOpen ? 'close' : 'show'} {others} other {others === 1 ? 'period' : 'periods'} of this signal
-            </button>
-          </td>
-        </tr>
-      )}
       {isOpen &&
         signal.relatives.map((relative, index) => (
           <Fragment key={relative.periodDays}>

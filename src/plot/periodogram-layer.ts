@@ -51,7 +51,8 @@ function drawAsColumns(context: DrawContext, frame: Frame, columns: ColumnExtrem
     const high = joined ? Math.max(lastLow, highest[column]!) : highest[column]!;
     const top = Math.max(frame.top, toPx(frame.y, high));
     const bottom = Math.min(frame.bottom, toPx(frame.y, low));
-    context.fillRect(frame.left + column, top, 1, Math.max(1, bottom - top));
+    // What lies wholly under the frame is not drawn over its axis.
+    if (top < frame.bottom) context.fillRect(frame.left + column, top, 1, Math.max(1, bottom - top));
     lastLow = lowest[column]!;
     lastHigh = highest[column]!;
   }
