@@ -1,129 +1,97 @@
-import type { SingleEvent } from '../../../src/contract/single-events-contract.ts';
-import { isAtEdge } from './event-edges.ts';
-import { estimateTimeError } from './event-errors.ts';
-import { findLonePoint, isJump } from './false-events.ts';
-import { significanceOf } from './fit-template.ts';
-import { cutNeighbourhood, fitPlaced, type Neighbourhood, type PlacedTemplate } from './neighbourhood.ts';
-import { refineTemplate } from './refine-template.ts';
-import { makeMoments, takeMoments } from './series-sums.ts';
+import type { Checkpoint } from '../../checkpoint.ts';
+import { type AcceptedEvent, judgeCandidate } from './judge-candidate.ts';
+import type { PlacedTemplate } from './neighbourhood.ts';
 import { boundWithin } from './stretches.ts';
 import type { Candidate, DurationSearch } from './template-search.ts';
 import type { UsablePoints } from './usable-points.ts';
 
 /** Candidates are looked at strongest first, and at most so many: on a restless star the rest is more of the same. */
 const MOST_REFINED = 300;
+/** Where so many were turned down within half a duration, the next will be too. */
+const MOST_TURNED_DOWN = 6;
+/** Within so many durations of a lone point that was taken out, what the search found has to be searched again. */
+const STALE_DURATIONS = 3;
 /** Half-width, in durations, of what is taken out with an event. */
 const TAKEN_OUT = 0.6;
 
-export interface AcceptedEvent {
-  readonly placed: PlacedTemplate;
-  readonly event: SingleEvent;
-}
-
-export interface Acceptance {
-  readonly accepted: AcceptedEvent[];
-  /** Without the accepted events and lone points; the same object when nothing was taken out. */
+/** What has been found so far. */
+export interface Findings {
+  readonly accepted: readonly AcceptedEvent[];
+  /** Accepted events and lone points have no weight. */
   readonly points: UsablePoints;
-  /** Where points were taken out this time, as `x`. */
+  /** Where points were taken out in the last round, as `x`. */
   readonly changedAt: readonly number[];
 }
 
 /**
  * Goes through the candidates, strongest first, refines them and takes each event that still stands out and overlaps
  * none so far. Its points carry no weight from then on, so that neither its sides nor its shoulders make another.
+ *
+ * @param all the points as they were before anything was taken out
+ * @returns undefined when cancelled
  */
-export function acceptCandidates(
+export async function acceptCandidates(
   all: UsablePoints,
-  start: UsablePoints,
+  earlier: Findings,
   searches: readonly DurationSearch[],
   threshold: number,
-  earlier: readonly AcceptedEvent[],
-): Acceptance {
-  const accepted = [...earlier];
-  let points = start;
-  const changedAt: number[] = [];
+  checkpoint: Checkpoint,
+): Promise<Findings | undefined> {
+  let findings: Findings = { ...earlier, changedAt: [] };
+  const turnedDown: number[] = [];
+  const lonePoints: number[] = [];
   let refined = 0;
-  for (const candidate of rankCandidates(searches)) {
+  for (const { template, centre } of rankCandidates(searches)) {
+    const placed = { ...template, centre };
     if (refined === MOST_REFINED) break;
-    const placed = { ...candidate.template, centre: candidate.centre };
-    if (accepted.some((other) => overlaps(other.placed, placed))) continue;
+    if (isTaken(findings, placed) || countNear(turnedDown, placed, 0.5) >= MOST_TURNED_DOWN) continue;
+    if (countNear(lonePoints, placed, STALE_DURATIONS) > 0) continue;
     refined += 1;
-    const judged = judge(all, points, searches, threshold, placed);
-    if (judged === undefined) continue;
-    if (typeof judged === 'number') {
-      changedAt.push(points.x[judged]!);
-      points = withoutWeight(points, judged, judged + 1);
-    } else if (!accepted.some((other) => overlaps(other.placed, judged.placed))) {
-      changedAt.push(judged.placed.centre);
-      accepted.push(judged);
-      points = withoutEvent(points, judged.placed);
-    }
+    const verdict = judgeCandidate(all, findings.points, searches, threshold, placed);
+    if (verdict === undefined) turnedDown.push(centre);
+    else if (typeof verdict === 'number') {
+      lonePoints.push(all.x[verdict]!);
+      findings = withoutLonePoint(findings, verdict);
+    } else if (!isTaken(findings, verdict.placed)) findings = withEvent(findings, verdict);
+    // Refinements are few beside the search itself: they leave its progress where it is.
+    if (checkpoint.isDue() && !(await checkpoint.pause(0, 1))) return undefined;
   }
-  return { accepted, points, changedAt };
+  return findings;
 }
 
+/**
+ * By significance against white noise, though each has passed the threshold against all noise: where noise is red, an
+ * edge of a dip alone has a higher S/N than the whole, of which it is not the better description.
+ */
 function rankCandidates(searches: readonly DurationSearch[]): Candidate[] {
-  return searches.flatMap(({ candidates }) => candidates).sort((a, b) => b.signalToNoise - a.signalToNoise);
+  return searches.flatMap(({ candidates }) => candidates).sort((a, b) => b.significance - a.significance);
 }
 
-function overlaps(a: PlacedTemplate, b: PlacedTemplate): boolean {
-  return Math.abs(a.centre - b.centre) < (a.durationDays + b.durationDays) / 2;
+function countNear(times: readonly number[], { centre, durationDays }: PlacedTemplate, reachDurations: number): number {
+  return times.filter((time) => Math.abs(time - centre) <= reachDurations * durationDays).length;
 }
 
-/** @returns undefined when it is none; the index of the point where it is but one point */
-function judge(
-  all: UsablePoints,
-  points: UsablePoints,
-  searches: readonly DurationSearch[],
-  threshold: number,
-  candidate: PlacedTemplate,
-): AcceptedEvent | number | undefined {
-  const placed = refineTemplate(points, candidate);
-  const near = cutNeighbourhood(points, placed);
-  const here = { ...placed, centre: 0 };
-  const fit = fitPlaced(near, here);
-  const noise = noiseNear(searches, placed.durationDays)?.at(placed.centre, fit.sides);
-  if (noise === undefined || !(significanceOf(fit) / noise >= threshold)) return undefined;
-  const lone = findLonePoint(near, here);
-  if (lone !== undefined) return boundWithin(points.x, placed.centre + near.sums.points.x[lone]!, 0, points.x.length);
-  const atEdge = isAtEdge(all, placed.centre, placed.durationDays) || !near.hasSlope;
-  if (!atEdge && isJump(near, here)) return undefined;
-  const signalToNoise = significanceOf(fit) / noise;
-  const event: SingleEvent = {
-    timeDays: all.anchorDays + placed.centre,
-    timeErrorDays: estimateTimeError(all, placed, (fit.depth * Math.sqrt(weighFloor(near, here))) / noise),
-    durationDays: placed.durationDays,
-    shape: placed.ingressDays > 0 ? 'trapezoid' : 'box',
-    depth: fit.depth,
-    depthError: fit.depth / signalToNoise,
-    signalToNoise,
-    pointsInside: fit.pointsInside,
-    coverage: Math.min(1, (fit.pointsInside * all.cadenceDays) / placed.durationDays),
-    isAtEdge: atEdge,
-  };
-  return { placed, event };
+function isTaken({ accepted }: Findings, { centre, durationDays }: PlacedTemplate): boolean {
+  return accepted.some(({ placed }) => Math.abs(placed.centre - centre) < (placed.durationDays + durationDays) / 2);
 }
 
-/** Information on the depth, were the level known: the squared template summed over weights, for an even cadence. */
-function weighFloor({ sums }: Neighbourhood, { centre, durationDays, ingressDays }: PlacedTemplate): number {
-  const { x } = sums.points;
-  const first = boundWithin(x, centre - durationDays / 2, 0, x.length);
-  const last = boundWithin(x, centre + durationDays / 2, first, x.length);
-  const { w } = takeMoments(sums.before, first, last, 0, makeMoments());
-  return w * (1 - (4 / 3) * (ingressDays / durationDays));
-}
-
-/** The noise at the duration that is nearest in ratio. */
-function noiseNear(searches: readonly DurationSearch[], durationDays: number): DurationSearch['noise'] {
-  const distance = (search: DurationSearch): number => Math.abs(Math.log(search.durationDays / durationDays));
-  return searches
-    .filter(({ noise }) => noise !== undefined)
-    .reduce((best, search) => (distance(search) < distance(best) ? search : best)).noise;
-}
-
-function withoutEvent(points: UsablePoints, { centre, durationDays }: PlacedTemplate): UsablePoints {
+function withEvent({ accepted, points, changedAt }: Findings, event: AcceptedEvent): Findings {
+  const { centre, durationDays } = event.placed;
   const from = boundWithin(points.x, centre - TAKEN_OUT * durationDays, 0, points.x.length);
-  return withoutWeight(points, from, boundWithin(points.x, centre + TAKEN_OUT * durationDays, from, points.x.length));
+  const end = boundWithin(points.x, centre + TAKEN_OUT * durationDays, from, points.x.length);
+  return {
+    accepted: [...accepted, event],
+    points: withoutWeight(points, from, end),
+    changedAt: [...changedAt, centre],
+  };
+}
+
+function withoutLonePoint({ accepted, points, changedAt }: Findings, point: number): Findings {
+  return {
+    accepted,
+    points: withoutWeight(points, point, point + 1),
+    changedAt: [...changedAt, points.x[point]!],
+  };
 }
 
 function withoutWeight(points: UsablePoints, from: number, end: number): UsablePoints {

@@ -1,7 +1,7 @@
 import { measureFilterNoise } from './filter-noise.ts';
-import { fitTemplate, makeTemplateFit, NO_SIDE, type Template } from './fit-template.ts';
+import { fitTemplate, makeTemplateFit, NO_SIDE } from './fit-template.ts';
 import { makeSeriesSums } from './series-sums.ts';
-import { slideTemplate } from './slide-template.ts';
+import { boxOf, slideTemplate } from './slide-template.ts';
 import { findStretches, type Stretch, stretchAt } from './stretches.ts';
 import { longestGapDays } from './template-search.ts';
 import type { UsablePoints } from './usable-points.ts';
@@ -33,48 +33,66 @@ export interface EventEvidence {
  * correlated, `filter-noise.ts`), the difference of chi-square is I D (D - 2 d). It is then softened for the chance
  * that the instrument made or spoilt what is seen: r = exp(-difference/2) becomes ((1-e) r + e) / (1-e + e r), e = 1e-4,
  * so that one place changes a period's chance by at most a factor of 10,000 (our own choice).
- * Where the data hold fewer than twelve durations the noise is taken as white.
+ * Where the data hold fewer than twenty durations the noise is taken as white.
  *
  * @param points with the known events taken out
  */
 export function makeEventEvidence(points: UsablePoints, depth: number, durationDays: number): EventEvidence {
-  const template: Template = { durationDays, ingressDays: 0 };
   const sums = makeSeriesSums(points);
   const stretches = findStretches(points.x, longestGapDays(durationDays));
-  const noise = measureFilterNoise(slideTemplate(sums, stretches, template));
-  const start = points.x[0]! - durationDays;
-  const cellDays = Math.max(CELL * durationDays, (points.spanDays + 2 * durationDays) / MOST_CELLS);
-  const cells = Math.ceil((points.spanDays + 2 * durationDays) / cellDays) + 1;
-  const objections = new Float64Array(cells).fill(Number.NaN);
-  const good = new Uint8Array(cells);
+  const noise = measureFilterNoise(slideTemplate(sums, stretches, durationDays));
+  const cells = layCells(points, durationDays);
   const fit = makeTemplateFit();
   const measure = (cell: number): void => {
-    const time = start + cell * cellDays;
-    fitTemplate(sums, stretchAt(points.x, stretches, time), time, template, fit);
+    const time = cells.start + cell * cells.stepDays;
+    fitTemplate(sums, stretchAt(points.x, stretches, time), time, boxOf(durationDays), fit);
     const information = fit.information / (noise?.at(time, fit.sides) ?? 1) ** 2;
-    objections[cell] = soften(information * depth * (depth - 2 * fit.depth));
+    cells.objection[cell] = soften(information * depth * (depth - 2 * fit.depth));
     const isGood = fit.sides !== NO_SIDE && fit.pointsInside * points.cadenceDays >= GOOD_COVERAGE * durationDays;
-    good[cell] = isGood ? 1 : 0;
+    cells.isGood[cell] = isGood ? 1 : 0;
   };
-  const cellAt = (time: number): number => Math.round((time - start) / cellDays);
   return {
     stretches,
-    objectionAt: (time, strayDays) => {
-      const last = Math.min(cells - 1, cellAt(time + strayDays));
-      let least = Number.POSITIVE_INFINITY;
-      for (let cell = Math.max(0, cellAt(time - strayDays)); cell <= last; cell += 1) {
-        if (Number.isNaN(objections[cell])) measure(cell);
-        least = Math.min(least, objections[cell]!);
-      }
-      return Number.isFinite(least) ? least : 0;
-    },
+    objectionAt: (time, strayDays) => leastObjection(cells, time - strayDays, time + strayDays, measure),
     isOnGoodData: (time) => {
-      const cell = cellAt(time);
-      if (!(cell >= 0 && cell < cells)) return false;
-      if (Number.isNaN(objections[cell])) measure(cell);
-      return good[cell] === 1;
+      const cell = cellAt(cells, time);
+      if (!(cell >= 0 && cell < cells.isGood.length)) return false;
+      if (Number.isNaN(cells.objection[cell])) measure(cell);
+      return cells.isGood[cell] === 1;
     },
   };
+}
+
+/** Answers at evenly spaced times, filled in as they are asked for; NaN until then. */
+interface Cells {
+  readonly start: number;
+  readonly stepDays: number;
+  readonly objection: Float64Array;
+  readonly isGood: Uint8Array;
+}
+
+function layCells({ x, spanDays }: UsablePoints, durationDays: number): Cells {
+  const reach = spanDays + 2 * durationDays;
+  const stepDays = Math.max(CELL * durationDays, reach / MOST_CELLS);
+  const count = Math.ceil(reach / stepDays) + 1;
+  return {
+    start: x[0]! - durationDays,
+    stepDays,
+    objection: new Float64Array(count).fill(Number.NaN),
+    isGood: new Uint8Array(count),
+  };
+}
+
+const cellAt = ({ start, stepDays }: Cells, time: number): number => Math.round((time - start) / stepDays);
+
+function leastObjection(cells: Cells, from: number, to: number, measure: (cell: number) => void): number {
+  const last = Math.min(cells.objection.length - 1, cellAt(cells, to));
+  let least = Number.POSITIVE_INFINITY;
+  for (let cell = Math.max(0, cellAt(cells, from)); cell <= last; cell += 1) {
+    if (Number.isNaN(cells.objection[cell])) measure(cell);
+    least = Math.min(least, cells.objection[cell]!);
+  }
+  return Number.isFinite(least) ? least : 0;
 }
 
 function soften(difference: number): number {
@@ -106,7 +124,7 @@ export function measureMeanDepth(
   let sum = 0;
   for (const time of times) {
     const stretch = stretchAt(points.x, stretches, time);
-    fitTemplate(sums, stretch, time, { durationDays, ingressDays: 0 }, fit);
+    fitTemplate(sums, stretch, time, boxOf(durationDays), fit);
     information += fit.information;
     sum += fit.information * fit.depth;
   }

@@ -15,22 +15,22 @@ export interface FilterNoise {
 
 /**
  * White and correlated noise at once: the robust scatter (1.4826 times the median modulus, about zero) of the very
- * filter that looks for events, over the whole series, and over each block of a hundred durations where that is
+ * box that looks for events, over the whole series, and over each block of a hundred durations where that is
  * clearly noisier. Apart for levels from both sides and from one, whose correlated noise is larger. Dips that fill
  * less than a few per cent of the time hardly enter; periodic ones should be masked.
  * After the idea of Pont, Zucker & Queloz (2006), MNRAS 373, 231: noise is what the same average shows elsewhere.
  *
- * @returns undefined where the data hold fewer than twelve independent durations
+ * @returns undefined where the data hold fewer than twenty independent durations
  */
 export function measureFilterNoise(output: FilterOutput): FilterNoise | undefined {
-  const { centres, significance, sides, template, strideDays } = output;
-  const inside = significance.filter((_, i) => sides[i] === BOTH_SIDES);
-  const least = (LEAST_WINDOWS * template.durationDays) / strideDays;
+  const { centres, box, sides, durationDays, strideDays } = output;
+  const inside = box.filter((_, i) => sides[i] === BOTH_SIDES);
+  const least = (LEAST_WINDOWS * durationDays) / strideDays;
   if (inside.length < least) return undefined;
   const overall = Math.max(1, scatterOf(inside));
   const isOneSideKnown = output.oneSided.length * ONE_SIDE_EVERY >= least;
   const oneSided = Math.max(overall, isOneSideKnown ? scatterOf(output.oneSided) : 0);
-  const blockDays = BLOCK_DURATIONS * template.durationDays;
+  const blockDays = BLOCK_DURATIONS * durationDays;
   const blocks = measureBlocks(output, blockDays);
   const excessAt = (centre: number): number => {
     const ratio = (blocks[Math.floor((centre - centres[0]!) / blockDays)] ?? 0) / overall;
@@ -43,13 +43,13 @@ const scatterOf = (values: Float64Array): number => MAD_TO_SIGMA * median(values
 
 /** Scatter in each block that is half full; others are left undefined. */
 function measureBlocks(output: FilterOutput, blockDays: number): (number | undefined)[] {
-  const { centres, significance, sides, strideDays } = output;
+  const { centres, box, sides, strideDays } = output;
   const blocks: (number | undefined)[] = [];
   for (let from = 0; from < centres.length; ) {
     const block = blocks.length;
     let end = from;
     while (end < centres.length && centres[end]! - centres[0]! < (block + 1) * blockDays) end += 1;
-    const values = significance.slice(from, end).filter((_, i) => sides[from + i] === BOTH_SIDES);
+    const values = box.slice(from, end).filter((_, i) => sides[from + i] === BOTH_SIDES);
     blocks.push(values.length >= blockDays / 2 / strideDays ? scatterOf(values) : undefined);
     from = end;
   }

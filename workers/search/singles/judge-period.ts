@@ -12,8 +12,8 @@ export interface PeriodVerdict {
 }
 
 /**
- * Asks the data about every event that a line predicts within the span. Where errors grow until an event could be
- * anywhere in its cycle, nothing is asked of it, and it does not count as one with data.
+ * Asks the data about every event that a line predicts within the span, at the time within its errors and the allowed
+ * variation, but not beyond its own cycle, that the data object to least.
  *
  * @param x days, times of the points
  * @param giveUpAt the sum at which the rest need not be asked
@@ -36,9 +36,8 @@ export function judgePeriod(
     const last = lastCycle(x[end - 1]!);
     for (let cycle = firstCycle(x[from]!); cycle <= last && deltaChiSquare < giveUpAt; cycle += 1) {
       const time = epoch + cycle * periodDays;
-      const stray = variationDays + PREDICTION_SIGMA * line.predictionError(cycle);
+      const stray = Math.min(periodDays / 2, variationDays + PREDICTION_SIGMA * line.predictionError(cycle));
       const isMarked = cycles.includes(cycle);
-      if (!isMarked && stray >= periodDays / 2) continue;
       if (isMarked || evidence.isOnGoodData(time)) eventsWithData += 1;
       if (!isMarked) deltaChiSquare += evidence.objectionAt(time, stray);
     }

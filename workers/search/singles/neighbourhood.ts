@@ -26,6 +26,8 @@ export interface PlacedTemplate extends Template {
 
 /** The points around a candidate, on running sums of their own: exact, and every template is held to the same points. */
 export interface Neighbourhood {
+  /** Index of its first point in the series. */
+  readonly from: number;
   readonly sums: SeriesSums;
   /** Whether the candidate has a level on either side, so that a slope is fitted as well. */
   readonly hasSlope: boolean;
@@ -45,7 +47,7 @@ export function cutNeighbourhood(points: UsablePoints, { centre, ...template }: 
   leaveOutBumps(x, y, weight, template.durationDays / 2);
   const sums = makeSeriesSums({ ...points, anchorDays: points.anchorDays + centre, x, y, weight });
   fitTemplate(sums, { from: 0, end: end - from }, 0, template, fit);
-  return { sums, hasSlope: fit.sides === BOTH_SIDES };
+  return { from, sums, hasSlope: fit.sides === BOTH_SIDES };
 }
 
 function leaveOutBumps(x: Float64Array, y: Float64Array, weight: Float64Array, half: number): void {

@@ -26,18 +26,20 @@ const CHANGED = 1.15;
 /**
  * The likeliest box or trapezoid near a candidate: centre, duration and ingress maximise what it takes off chi-square,
  * on a grid and then by a pattern search. A box's edges come out midway between the points that they part.
+ *
+ * @param longestDays no template is longer: noise is not known at such durations
  */
-export function refineTemplate(points: UsablePoints, candidate: PlacedTemplate): PlacedTemplate {
-  const first = refineOnce(points, candidate);
+export function refineTemplate(points: UsablePoints, candidate: PlacedTemplate, longestDays: number): PlacedTemplate {
+  const first = refineOnce(points, candidate, longestDays);
   const ratio = first.durationDays / candidate.durationDays;
-  return ratio > CHANGED || ratio < 1 / CHANGED ? refineOnce(points, first) : first;
+  return ratio > CHANGED || ratio < 1 / CHANGED ? refineOnce(points, first, longestDays) : first;
 }
 
-function refineOnce(points: UsablePoints, candidate: PlacedTemplate): PlacedTemplate {
+function refineOnce(points: UsablePoints, candidate: PlacedTemplate, longestDays: number): PlacedTemplate {
   const near = cutNeighbourhood(points, candidate);
   const limits = {
     least: LEAST_CADENCES * points.cadenceDays,
-    most: LONGEST_FACTOR * candidate.durationDays,
+    most: Math.min(longestDays, LONGEST_FACTOR * candidate.durationDays),
     unit: candidate.durationDays,
     first: near.sums.points.x[0]!,
     last: near.sums.points.x.at(-1)!,
@@ -61,7 +63,7 @@ interface Limits {
 
 function scan(near: Neighbourhood, limits: Limits, ingressFractions: readonly number[]): PlacedTemplate {
   const trials = DURATION_FACTORS.flatMap((factor) => {
-    const durationDays = Math.max(limits.least, factor * limits.unit);
+    const durationDays = Math.max(limits.least, Math.min(limits.most, factor * limits.unit));
     return ingressFractions.flatMap((fraction) =>
       SHIFTS.map((shift) => {
         const centre = Math.max(limits.first, Math.min(limits.last, shift * limits.unit));

@@ -5,6 +5,9 @@ import { median, robustSigma } from '../../../src/core/robust-statistics.ts';
 const LEAST_POINTS = 10;
 /** No point counts as better than this part of the typical error: one absurd error must not outweigh all others. */
 const LEAST_ERROR = 0.1;
+/** A point this many sigma off its neighbours, neither of which follows it a quarter of the way, stands alone. */
+const LONE_SIGMA = 8;
+const FOLLOWED = 0.25;
 /** Running sums keep their digits only while no value dwarfs all others; no dip is deeper than this many sigma. */
 const MOST_SIGMA = 1e6;
 
@@ -34,11 +37,12 @@ export function selectUsablePoints({ time, flux, error }: SearchSeries, purpose:
   const anchorDays = (usableTime[0]! + usableTime[n - 1]!) / 2;
   const x = usableTime.map((value) => value - anchorDays);
   const steps = x.subarray(1).map((value, i) => value - x[i]!);
+  const y = limitFlux(flux.filter(isUsable));
   return {
     anchorDays,
     x,
-    y: limitFlux(flux.filter(isUsable)),
-    weight: weighPoints(error.filter(isUsable)),
+    y,
+    weight: leaveOutLonePoints(y, weighPoints(error.filter(isUsable))),
     cadenceDays: median(steps.filter((step) => step > 0)),
     spanDays,
   };
@@ -53,6 +57,31 @@ function limitFlux(flux: Float64Array): Float64Array {
 function weighPoints(error: Float64Array): Float64Array {
   const least = LEAST_ERROR * median(error);
   return error.map((sigma) => 1 / Math.max(sigma, least) ** 2);
+}
+
+/**
+ * Takes the weight from points that differ from the median of two neighbours on either side by over eight sigma (of
+ * that difference over the series), and that neither neighbour follows a quarter of the way: particle hits and dropped
+ * readings. A dip of two points is none of them; one of a single point cannot be told from them.
+ */
+function leaveOutLonePoints(y: Float64Array, weight: Float64Array): Float64Array {
+  const middles = y.map((value, i) =>
+    middleOfFour(y[i - 2] ?? value, y[i - 1] ?? value, y[i + 1] ?? value, y[i + 2] ?? value),
+  );
+  const sigma = robustSigma(y.map((value, i) => value - middles[i]!));
+  return weight.map((own, i) => {
+    const middle = middles[i]!;
+    const off = y[i]! - middle;
+    if (!(Math.abs(off) > LONE_SIGMA * sigma) || sigma === 0) return own;
+    const isFollowed = [y[i - 1], y[i + 1]].some(
+      (beside) => beside !== undefined && (beside - middle) / off > FOLLOWED,
+    );
+    return isFollowed ? own : 0;
+  });
+}
+
+function middleOfFour(a: number, b: number, c: number, d: number): number {
+  return (a + b + c + d - Math.min(a, b, c, d) - Math.max(a, b, c, d)) / 2;
 }
 
 /** The same points, those within `halfWidthDays` of any of the times (as `x`) without weight. */
