@@ -58,7 +58,7 @@ export interface PeriodsFromTimesJob {
   /** Mid-event times, two or more. */
   readonly times: readonly { readonly timeDays: number; readonly errorDays: number }[];
   readonly durationDays: number;
-  /** Undefined: the shortest distance of two times over the most cycles that the data leave room for. */
+  /** Undefined: three durations, or the Roche limit where that is longer; the data rule out the rest. */
   readonly shortestPeriodDays: number | undefined;
   /** How far an event may stray from the linear ephemeris (transit-timing variations); 0 allows none. */
   readonly timingVariationDays: number;
@@ -71,7 +71,7 @@ export interface CandidatePeriod {
   readonly epochDays: number;
   /** Of all that are considered, summing to 1. */
   readonly weight: number;
-  /** By how much the data object to the predicted events that are not there. */
+  /** By how much the data object to the predicted events that are not there; negative where unmarked dips are. */
   readonly deltaChiSquare: number;
   /** Events predicted within the span, and how many of them fall on good data. */
   readonly eventsPredicted: number;
@@ -111,6 +111,6 @@ export interface SinglePeriodResult {
   /** Central 68 %. */
   readonly lowDays: number;
   readonly highDays: number;
-  /** Below it the data would have shown another event. */
+  /** The shortest period that can still hide, in gaps too. */
   readonly shortestDays: number;
 }

@@ -1,4 +1,5 @@
 import { DEFAULT_LOMB_SCARGLE, type LombScargleResult } from '../contract/lomb-scargle-contract.ts';
+import { failed, type Outcome } from '../contract/outcome.ts';
 import type { DepthLoss, PreparedSeries } from '../contract/prepare-contract.ts';
 import type { FalseAlarmResult, SearchSeries } from '../contract/search-contract.ts';
 import type {
@@ -43,8 +44,8 @@ export interface SignalResults {
   /** Also puts the probability of the strongest peak into the docket's summary of the target. */
   falseAlarms(target: Target, priority?: TaskPriority): Promise<FalseAlarmResult | undefined>;
   depthLoss(target: Target, ephemeris: Ephemeris, depth: number): Promise<DepthLoss | undefined>;
-  periodsFromTimes(target: Target, job: Own<PeriodsFromTimesJob>): Promise<PeriodsFromTimesResult | undefined>;
-  periodOfSingle(target: Target, job: Own<SinglePeriodJob>): Promise<SinglePeriodResult | undefined>;
+  periodsFromTimes(target: Target, job: Own<PeriodsFromTimesJob>): Promise<Outcome<PeriodsFromTimesResult>>;
+  periodOfSingle(target: Target, job: Own<SinglePeriodJob>): Promise<Outcome<SinglePeriodResult>>;
 }
 
 export const depthLossKey = (target: Target, ephemeris: Ephemeris): string =>
@@ -81,6 +82,12 @@ export function createSignalResults(deps: {
   ): Promise<T | undefined> {
     const series = await targetResults.prepared(target, priority);
     return series === undefined ? undefined : run(series);
+  }
+
+  /** What is asked once and kept in the case: not cached, and its reason for failing is the asker's to say. */
+  async function ask<T>(target: Target, run: (series: PreparedSeries) => Promise<Outcome<T>>): Promise<Outcome<T>> {
+    const series = await targetResults.prepared(target);
+    return series === undefined ? failed('The flux of this target is not prepared.') : run(series);
   }
 
   async function measureDepthLoss(target: Target, key: string, ephemeris: Ephemeris, depth: number) {
@@ -151,19 +158,13 @@ export function createSignalResults(deps: {
       const key = depthLossKey(target, ephemeris);
       return cached('depthLosses', key, () => measureDepthLoss(target, key, ephemeris, depth));
     },
-    periodsFromTimes(target, job) {
+    periodsFromTimes: (target, job) => {
       const key = stableKey({ periods: preparedKey(target), job });
-      return runs.once(key, () =>
-        onSeries(target, (series) =>
-          runs.settle(key, jobs.periodsFromTimes({ key, series: seriesOf(series), ...job })),
-        ),
-      );
+      return ask(target, (series) => jobs.periodsFromTimes({ key, series: seriesOf(series), ...job }).promise);
     },
-    periodOfSingle(target, job) {
+    periodOfSingle: (target, job) => {
       const key = stableKey({ single: preparedKey(target), job });
-      return runs.once(key, () =>
-        onSeries(target, (series) => runs.settle(key, jobs.periodOfSingle({ key, series: seriesOf(series), ...job }))),
-      );
+      return ask(target, (series) => jobs.periodOfSingle({ key, series: seriesOf(series), ...job }).promise);
     },
   };
 }

@@ -15,6 +15,9 @@ const TIMING_VARIATION_DURATIONS = 0.25;
 /** A hand-drawn mark tells its middle and its length to about this part of its length. */
 const MARK_ACCURACY = 0.15;
 
+const NO_PERIOD =
+  'No period fits the marked dips and the data between them. Move or delete a mark, or make the case by hand.';
+
 /** From signals, marks and numbers to cases. */
 export function createCaseActions(kit: ActionKit) {
   const { view, bench, run, say, signals, newId } = kit;
@@ -76,16 +79,15 @@ export function createCaseActions(kit: ActionKit) {
       return;
     }
     const timing = await timingOfMarks(target, marks, durationDays);
-    if (timing === undefined)
-      say('No period fits the marked dips and the data between them. Move or delete a mark, or make the case by hand.');
-    else makeCase(target, timing, origin, numbersOfTiming(selection, timing));
+    if (typeof timing === 'string') say(timing);
+    else if (timing !== undefined) makeCase(target, timing, origin, numbersOfTiming(selection, timing));
   }
 
   async function timingOfMarks(
     target: Target,
     marks: readonly Mark[],
     durationDays: number,
-  ): Promise<Timing | undefined> {
+  ): Promise<Timing | string | undefined> {
     const errorDays = durationDays * MARK_ACCURACY;
     const found = await signals.periodsFromTimes(target, {
       times: marks.map((mark) => ({ timeDays: middleOf(mark), errorDays })),
@@ -93,8 +95,10 @@ export function createCaseActions(kit: ActionKit) {
       shortestPeriodDays: undefined,
       timingVariationDays: durationDays * TIMING_VARIATION_DURATIONS,
     });
-    const [first, ...others] = found?.candidates ?? [];
-    if (first === undefined) return undefined;
+    if (found.kind === 'cancelled') return undefined;
+    if (found.kind === 'failed') return found.error.sentence;
+    const [first, ...others] = found.value.candidates;
+    if (first === undefined) return NO_PERIOD;
     const { epochDays, periodDays, periodErrorDays } = first;
     if (others.length === 0) return { kind: 'linear', periodDays, periodErrorDays, epochDays, durationDays };
     const periods = [first, ...others].map((one) => ({ periodDays: one.periodDays, weight: one.weight }));
@@ -123,8 +127,10 @@ export function createCaseActions(kit: ActionKit) {
             densityErrorCgs: target.star.densityErrorCgs,
             depth,
           });
-    const shortest = period?.shortestDays ?? shortestUnseenPeriod(prepared.time, timeDays, durationDays);
-    return { ...timing, shortestPeriodDays: shortest, ...likelyPeriods(period) };
+    const known = period?.kind === 'done' ? period.value : undefined;
+    if (period?.kind === 'failed') say(period.error.sentence);
+    const shortest = known?.shortestDays ?? shortestUnseenPeriod(prepared.time, timeDays, durationDays);
+    return { ...timing, shortestPeriodDays: shortest, ...likelyPeriods(known) };
   }
 
   async function makeCaseByHand(timing: Timing): Promise<void> {
