@@ -1,4 +1,5 @@
 import { expect, test } from '@playwright/test';
+import { GUTTER_PX, RIGHT_PX } from '../src/plot/frame.ts';
 import { BenchPage } from './bench-page.ts';
 
 const numberIn = async (text: Promise<string | null>) =>
@@ -39,8 +40,8 @@ test('the duration of a case is set by the foot of its caliper', async ({ page }
   const before = await hours();
   const box = (await bench.foldPlot.boundingBox())!;
   // Six durations lie across the plot: the right foot stands half of one right of the middle.
-  const across = box.width - 58 - 12;
-  const foot = (58 + across / 2 + across / 12) / box.width;
+  const across = box.width - GUTTER_PX - RIGHT_PX;
+  const foot = (GUTTER_PX + across / 2 + across / 12) / box.width;
   await bench.drag(bench.foldPlot, [foot, 0.06], [foot + 0.04, 0.06]);
   expect(await hours()).toBeGreaterThan(before * 1.1);
   await page.keyboard.press('Control+z');

@@ -1,5 +1,6 @@
 import { readFileSync } from 'node:fs';
 import { expect, test } from '@playwright/test';
+import { GUTTER_PX, RIGHT_PX } from '../src/plot/frame.ts';
 import { BenchPage, savedText } from './bench-page.ts';
 
 const truths = JSON.parse(readFileSync(new URL('../public/demo/truths.json', import.meta.url), 'utf8'));
@@ -142,7 +143,7 @@ test('an analyst works through the demo docket: look, fold, mark, make a case, r
     await bench.searched();
     const box = (await bench.stripPlot.boundingBox())!;
     // The documented event at 48.631 on a strip from 12.3 to 67.
-    const x = 58 + ((48.631 - 12.03) / (67.27 - 12.03)) * (box.width - 58 - 12);
+    const x = GUTTER_PX + ((48.631 - 12.03) / (67.27 - 12.03)) * (box.width - GUTTER_PX - RIGHT_PX);
     await page.keyboard.press('m');
     await bench.drag(bench.stripPlot, [(x - 8) / box.width, 0.5], [(x + 8) / box.width, 0.5]);
     await page.keyboard.press('Enter');
