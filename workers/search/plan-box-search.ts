@@ -14,6 +14,7 @@ import {
 import { countTrials, makePeriodGrid, ROCHE_PERIOD_DAYS, surfacePeriodDays } from './period-grid.ts';
 
 const LEAST_POINTS = 10;
+const MOST_STEPS = 4000;
 /** About half a gigabyte of results: beyond it the settings are a slip. */
 const MOST_TRIALS = 4_000_000;
 
@@ -139,9 +140,10 @@ function findContradiction(settings: BoxSearchSettings, range: PlannedRange, cad
 const days = (value: number): string => `${Number(value.toPrecision(4))} d`;
 const hours = (value: number): string => `${Number((value * 24).toPrecision(4))} h`;
 
+/** Steps to the next point from up to some thousand places all over the series: enough for a median. */
 function positiveSteps(time: Float64Array): Float64Array {
-  return time
-    .subarray(1)
-    .map((value, i) => value - time[i]!)
-    .filter((step) => step > 0);
+  const stride = Math.max(1, Math.floor(time.length / MOST_STEPS));
+  const steps: number[] = [];
+  for (let i = 1; i < time.length; i += stride) if (time[i]! > time[i - 1]!) steps.push(time[i]! - time[i - 1]!);
+  return Float64Array.from(steps);
 }
