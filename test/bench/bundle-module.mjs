@@ -16,6 +16,7 @@ export async function bundleModules(entries) {
       configFile: false,
       logLevel: 'error',
       plugins: config.plugins,
+      ssr: { noExternal: true },
       build: { outDir, minify: false, ssr: true, target: 'es2023', rollupOptions: { input: entries } },
     });
     const loaded = {};

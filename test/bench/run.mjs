@@ -3,6 +3,8 @@
  */
 const BENCHES = {
   search: () => import('./search.bench.mjs'),
+  'lomb-scargle': () => import('./lomb-scargle.bench.mjs'),
+  recovery: () => import('./recovery.bench.mjs'),
 };
 
 const [name, ...options] = process.argv.slice(2);

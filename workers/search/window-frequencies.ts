@@ -18,7 +18,8 @@ export function windowFrequencies(time: Float64Array): number[] {
   const span = time.at(-1)! - time[0]!;
   if (!(span > 0)) return [];
   const thin = Math.max(1, Math.ceil(time.length / MOST_POINTS));
-  const points = time.filter((_, i) => i % thin === 0).map((value) => value - time[0]!);
+  const points = new Float64Array(Math.ceil(time.length / thin));
+  for (let i = 0; i < points.length; i += 1) points[i] = time[i * thin]! - time[0]!;
   const steps = Math.min(MOST_STEPS, Math.ceil(HIGHEST_PER_DAY * span * 3));
   const power = windowPower(points, HIGHEST_PER_DAY / steps, steps);
   const first = Math.ceil((2 / span / HIGHEST_PER_DAY) * steps);

@@ -16,7 +16,7 @@ export interface PeriodogramSize {
  * @param power 0 to 1
  */
 export function sineFalseAlarm(power: number, { points, highestPerDay, timeVariance }: PeriodogramSize): number {
-  if (points < 5) return 1;
+  if (points < 4) return 1;
   const rest = Math.max(0, 1 - power);
   const gamma = Math.sqrt(2 / (points - 1)) * Math.exp(logGamma((points - 1) / 2) - logGamma((points - 2) / 2));
   const width = highestPerDay * Math.sqrt(4 * Math.PI * timeVariance);
