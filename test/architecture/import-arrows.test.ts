@@ -20,6 +20,7 @@ const ARROWS: Readonly<Record<string, readonly string[]>> = {
   'src/records': ['src/store', 'src/plot', 'src/session', 'src/contract', 'src/core'],
   'src/app': ['src/'],
   workers: ['src/core', 'src/contract'],
+  'workers/batch': ['workers/', 'src/session', 'src/contract', 'src/core'],
 };
 
 async function readImports(): Promise<ICruiseResult> {
@@ -36,7 +37,10 @@ async function readImports(): Promise<ICruiseResult> {
   return output as ICruiseResult;
 }
 
-const folderOf = (path: string) => (path.startsWith('workers/') ? 'workers' : path.split('/').slice(0, 2).join('/'));
+const folderOf = (path: string) => {
+  const folder = path.split('/').slice(0, 2).join('/');
+  return path.startsWith('workers/') && folder !== 'workers/batch' ? 'workers' : folder;
+};
 
 const { modules } = await readImports();
 const own = modules.filter(({ source }) => /^(src|workers)\//.test(source));
