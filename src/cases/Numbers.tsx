@@ -1,7 +1,7 @@
 import { formatNumber, formatValueWithError } from '../core/number-format.ts';
 import { describeRecipe } from '../session/describe-recipe.ts';
 import { depthLossKey } from '../store/signal-results.ts';
-import { preparedKey, searchKey } from '../store/target-keys.ts';
+import { preparedKey, roundKeys } from '../store/target-keys.ts';
 import { useBench, useCandling, useResults } from '../store/use-candling.ts';
 import { chanceWords } from './chance-words.ts';
 import { measureAgain } from './measure-again.ts';
@@ -15,7 +15,7 @@ export function NumbersSection() {
   const { numbers } = chosen;
   const inSigma = prepared?.fluxUnit === 'sigma';
   const factor = inSigma ? 1 : 1e6;
-  const stale = numbers !== undefined && numbers.key !== preparedKey(target) && numbers.key !== searchKey(target);
+  const stale = numbers !== undefined && ![preparedKey(target), ...roundKeys(target)].includes(numbers.key);
   const depth = formatValueWithError(
     numbers && numbers.boxDepth * factor,
     numbers?.boxDepthError === undefined ? undefined : numbers.boxDepthError * factor,
@@ -28,7 +28,7 @@ export function NumbersSection() {
       </h3>
       {stale && (
         <p className="notice">
-          <span>These numbers are of an earlier recipe.</span>
+          <span>These numbers are of an earlier recipe or search.</span>
           <span className="spread" />
           <button
             type="button"

@@ -35,9 +35,11 @@ export async function importSession(candling: Candling, file: Pick<File, 'name' 
     const open = committed(candling);
     const ahead = open === undefined ? 0 : entriesAhead(open, read.document);
     if (ahead > 0) return refuse(olderWords(file.name, ahead));
-    await candling.openSession(read.document);
+    const isCopy = open?.id !== read.document.id && (await isBehindSaved(candling, read.document));
+    await candling.openSession(isCopy ? asEarlierState(read.document) : read.document);
     const missing = await missingFiles(candling, read.document);
-    if (missing.length > 0) view.setState({ notice: { kind: 'notice', sentence: missingWords(missing) } });
+    const words = [isCopy ? copyWords(file.name) : '', missing.length > 0 ? missingWords(missing) : ''].filter(Boolean);
+    if (words.length > 0) view.setState({ notice: { kind: 'notice', sentence: words.join(' ') } });
   } catch (cause) {
     refuse(`${file.name} was not opened. The browser said: ${cause instanceof Error ? cause.message : String(cause)}.`);
   }
@@ -49,6 +51,19 @@ export function entriesAhead(open: SessionDocument, copy: SessionDocument): numb
   const known = new Set(copy.journal.map(({ id }) => id));
   return open.journal.filter(({ id }) => !known.has(id)).length;
 }
+
+/** Whether this machine keeps a later state of the same session: opening this one under its name would write over it. */
+async function isBehindSaved({ storage }: Candling, document: SessionDocument): Promise<boolean> {
+  const saved = await storage.readSession(document.id);
+  return saved !== undefined && entriesAhead(saved.document, document) > 0;
+}
+
+function asEarlierState(document: SessionDocument): SessionDocument {
+  return { ...document, id: globalThis.crypto.randomUUID(), name: `${document.name} (earlier state)` };
+}
+
+const copyWords = (fileName: string): string =>
+  `${fileName} is an earlier state of a session that this machine keeps: it was opened as a session of its own, and the later one is as it was.`;
 
 function olderWords(fileName: string, ahead: number): string {
   const entries = ahead === 1 ? '1 journal entry' : `${ahead} journal entries`;

@@ -1,5 +1,6 @@
 import { type DBSchema, type IDBPDatabase, openDB } from 'idb';
 import type { SessionDocument } from '../session/document.ts';
+import { upgrade } from '../session/upgrade.ts';
 import type { TargetSummary } from './results-store.ts';
 import type { RememberedView } from './view-store.ts';
 
@@ -20,6 +21,7 @@ interface CandlingDatabase extends DBSchema {
 export interface SessionStorage {
   /** The session saved last that has a target in it: an empty one is nothing to come back to. */
   lastSession(): Promise<SavedSession | undefined>;
+  readSession(id: string): Promise<SavedSession | undefined>;
   saveSession(session: SavedSession): Promise<void>;
   saveFile(sha256: string, name: string, bytes: ArrayBuffer): Promise<void>;
   readFile(sha256: string): Promise<ArrayBuffer | undefined>;
@@ -35,12 +37,17 @@ export function createSessionStorage(name = 'candling'): SessionStorage {
   return {
     async lastSession() {
       const sessions = await (await opened).getAll('sessions');
-      return sessions
+      const latest = sessions
         .filter(({ document }) => document.targets.length > 0)
         .reduce<SavedSession | undefined>(
-          (latest, session) => (latest === undefined || session.savedAt > latest.savedAt ? session : latest),
+          (newest, session) => (newest === undefined || session.savedAt > newest.savedAt ? session : newest),
           undefined,
         );
+      return latest && inCurrentForm(latest);
+    },
+    async readSession(id) {
+      const saved = await (await opened).get('sessions', id);
+      return saved && inCurrentForm(saved);
     },
     async saveSession(session) {
       await (await opened).put('sessions', session, session.document.id);
@@ -64,6 +71,11 @@ export function createSessionStorage(name = 'candling'): SessionStorage {
       return (await (await opened).get('summaries', sessionId)) ?? new Map();
     },
   };
+}
+
+/** What an older Candling saved is brought up as an older file is. */
+function inCurrentForm({ document, savedAt }: SavedSession): SavedSession {
+  return { document: upgrade({ ...document }) as unknown as SessionDocument, savedAt };
 }
 
 function openDatabase(name: string): Promise<IDBPDatabase<CandlingDatabase>> {

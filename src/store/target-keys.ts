@@ -63,6 +63,16 @@ function keyOf(inputsOf: (target: Target) => unknown): (target: Target) => strin
   };
 }
 
+/** Keys of this round of the search and of those before it: a case keeps the numbers of its own round. */
+export function roundKeys(target: Target): readonly string[] {
+  const masked = target.search.masked ?? [];
+  const earlier = masked.map((_, round) => ({
+    ...target,
+    search: { ...target.search, masked: masked.slice(0, round) },
+  }));
+  return [searchKey(target), ...earlier.map(searchKey)];
+}
+
 /** Keys of what is computed on request, each of its own inputs. */
 export const sinesKey = keyOf((target) => ({ sines: preparedKey(target), settings: DEFAULT_LOMB_SCARGLE }));
 export const singlesKey = keyOf((target) => ({ singles: preparedKey(target), settings: singleSettingsOf(target) }));

@@ -57,7 +57,9 @@ describe('importing a session', () => {
     await candling.startSession('another');
     await importSession(candling, file('earlier.candling.json', earlier));
     expect(document().targets[0]!.cases).toEqual([]);
-    expect(document().id).toBe(before.id);
+    expect(document().id).not.toBe(before.id);
+    expect(document().name).toContain('(earlier state)');
+    expect((await candling.storage.readSession(before.id))!.document.targets[0]!.cases).toHaveLength(1);
   });
 
   it('opens a later state of the open session', async () => {
