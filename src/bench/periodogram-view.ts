@@ -1,3 +1,4 @@
+import { rankedSignalToNoise } from '../core/box-search-settings.ts';
 import { strengthAt } from '../core/extreme-value.ts';
 import { isSameSignal } from '../core/same-signal.ts';
 import { numberLabel } from '../plot/number-label.ts';
@@ -42,13 +43,12 @@ export function boxView(bench: BenchSelection, quantity: PeriodogramValue): Peri
 
 /** A peak wears its case's shape where a case has the same signal. */
 function boxPeaks({ search, target, prepared }: BenchSelection, quantity: PeriodogramValue): PeriodogramPeak[] {
-  const white = search?.settings.objective !== 'correlated noise S/N';
   return (search?.peaks ?? []).map((peak) => ({
     periodDays: peak.periodDays,
     value: {
       SDE: peak.sde,
       levelled: peak.levelledEfficiency,
-      'S/N': white ? peak.signalToNoise : peak.correlatedSignalToNoise,
+      'S/N': rankedSignalToNoise(peak, search!.settings.objective),
     }[quantity],
     label: `${numberLabel(peak.periodDays, 5)} d`,
     caseNumber: target?.cases.find(

@@ -1,5 +1,6 @@
 import { Fragment, useState } from 'react';
 import type { BoxPeak, BoxSignal } from '../contract/search-contract.ts';
+import { rankedSignalToNoise } from '../core/box-search-settings.ts';
 import { falseAlarmProbability } from '../core/extreme-value.ts';
 import { formatNumber } from '../core/number-format.ts';
 import { isSameSignal } from '../core/same-signal.ts';
@@ -181,8 +182,7 @@ function ChanceLine() {
         <span className="quiet">by searching this series with its blocks of time permuted and inverted</span>
       </p>
     );
-  const white = search?.settings.objective !== 'correlated noise S/N';
-  const chance = falseAlarmProbability(falseAlarm, white ? best.signalToNoise : best.correlatedSignalToNoise);
+  const chance = falseAlarmProbability(falseAlarm, rankedSignalToNoise(best, search!.settings.objective));
   return (
     <p className="small">
       False-alarm probability of the strongest: <b>{chanceWords(chance)}</b>.{' '}

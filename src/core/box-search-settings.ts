@@ -38,6 +38,15 @@ export const DEFAULT_BOX_SEARCH: BoxSearchSettings = {
   oversampling: 3,
   densityCgs: undefined,
   durationsDays: undefined,
-  objective: 'white noise S/N',
+  // On spotted stars and in red noise, white noise alone ranks what detrending left over planets.
+  objective: 'correlated noise S/N',
   masked: [],
 };
+
+/** The S/N that a signal is ranked by. */
+export function rankedSignalToNoise(
+  peak: { readonly signalToNoise: number; readonly correlatedSignalToNoise: number },
+  objective: SearchObjective,
+): number {
+  return objective === 'white noise S/N' ? peak.signalToNoise : peak.correlatedSignalToNoise;
+}

@@ -1,4 +1,4 @@
-import type { SessionDocument, Target } from '../session/document.ts';
+import type { CaseNumbers, SessionDocument, Target } from '../session/document.ts';
 import { type Standing, targetStanding } from '../session/selectors.ts';
 import type { ResultsState, TargetSummary } from './results-store.ts';
 import type { DocketOrder, ViewState } from './view-store.ts';
@@ -28,12 +28,16 @@ export function docketRow(target: Target, summary: TargetSummary | undefined): D
     parkedUntil: parked?.until,
     periodDays:
       first === undefined ? summary?.periodDays : first.timing.kind === 'linear' ? first.timing.periodDays : undefined,
-    signalToNoise: first?.numbers?.signalToNoise ?? (first === undefined ? summary?.signalToNoise : undefined),
+    signalToNoise: first === undefined ? (summary?.objective ?? summary?.signalToNoise) : strengthOf(first.numbers),
     smallFold: summary?.smallFold,
     smallStrip: summary?.smallStrip,
     failure: summary?.failure,
   };
 }
+
+/** With correlated noise where that was measured. */
+const strengthOf = (numbers: CaseNumbers | undefined): number | undefined =>
+  numbers?.correlatedSignalToNoise ?? numbers?.signalToNoise;
 
 /** The docket's rows in their order on the screen. */
 export function shownRows(

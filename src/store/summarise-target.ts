@@ -1,5 +1,6 @@
 import type { PreparedSeries } from '../contract/prepare-contract.ts';
 import type { BoxPeak, BoxSearchResult } from '../contract/search-contract.ts';
+import { rankedSignalToNoise } from '../core/box-search-settings.ts';
 import { phaseOf } from '../core/ephemeris.ts';
 import type { TargetSummary } from './results-store.ts';
 
@@ -18,7 +19,7 @@ export function summariseTarget(series: PreparedSeries, search: BoxSearchResult)
     sde: peak?.sde,
     eventCount: peak?.eventCount,
     depth: peak?.boxDepth,
-    objective: search.settings.objective === 'white noise S/N' ? peak?.signalToNoise : peak?.correlatedSignalToNoise,
+    objective: peak && rankedSignalToNoise(peak, search.settings.objective),
     falseAlarmProbability: undefined,
     failure: undefined,
     smallStrip: shrinkStrip(series),

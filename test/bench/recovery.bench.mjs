@@ -163,7 +163,7 @@ export async function run(options) {
     const plan = kernels.planBoxSearch(input, settings).value;
     const other = await astropy.search(curve, plan);
     const [best] = result.peaks;
-    const own = best !== undefined && isFound(curve, best.periodDays) && best.signalToNoise >= THRESHOLD;
+    const own = best !== undefined && isFound(curve, best.periodDays) && best.correlatedSignalToNoise >= THRESHOLD;
     const theirs = other !== undefined && isFound(curve, other[0]) && other[3] >= THRESHOLD;
     for (const key of [
       'all',

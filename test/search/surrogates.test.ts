@@ -7,7 +7,12 @@ import { createLehmer } from '../demo/lehmer.mjs';
 import { expectDone, makeBoxSeries, quietCheckpoint, searchBox } from './search-box.ts';
 
 const SAMPLING = { points: 1500, cadenceDays: 1 / 48, sigma: 0.001 };
-const settings = { ...DEFAULT_BOX_SEARCH, shortestPeriodDays: 1, oversampling: 2 };
+const settings = {
+  ...DEFAULT_BOX_SEARCH,
+  shortestPeriodDays: 1,
+  oversampling: 2,
+  objective: 'white noise S/N',
+} as const;
 const planet = { periodDays: 3.3, epochDays: 101.1, durationDays: 0.16, depth: 0.003 };
 
 async function falseAlarms(series: SearchSeries, partCount = 1, surrogateCount = 60) {

@@ -82,7 +82,7 @@ function separateLabels(labels: readonly string[]): readonly string[] {
 
 function journalOf({ app, at, settings, results, failures }: SweepRecord): readonly JournalEntry[] {
   const { rounds, leastSignalToNoise, leastEvents } = settings;
-  const whole = `swept ${results.length} ${results.length === 1 ? 'target' : 'targets'} unattended: cases are the strongest signals of up to ${rounds} ${rounds === 1 ? 'round' : 'rounds'} from S/N ${leastSignalToNoise} and ${leastEvents} events on`;
+  const whole = `swept ${results.length} ${results.length === 1 ? 'target' : 'targets'} unattended: cases are the strongest signals of up to ${rounds} ${rounds === 1 ? 'round' : 'rounds'} from S/N ${leastSignalToNoise} with correlated noise and ${leastEvents} events on`;
   const entries = [
     { targetId: undefined, what: whole },
     ...failures.map((sentence) => ({ targetId: undefined, what: `left out: ${sentence}` })),

@@ -1,6 +1,6 @@
 import { done, type Outcome } from '../../src/contract/outcome.ts';
 import type { BoxPeak, BoxSearchResult, SearchSeries } from '../../src/contract/search-contract.ts';
-import type { BoxSearchSettings, MaskedSignal } from '../../src/core/box-search-settings.ts';
+import { type BoxSearchSettings, type MaskedSignal, rankedSignalToNoise } from '../../src/core/box-search-settings.ts';
 import type { CaseNumbers } from '../../src/session/document.ts';
 import type { Checkpoint } from '../checkpoint.ts';
 import { maskSignals } from '../search/mask-signals.ts';
@@ -30,8 +30,8 @@ export async function searchRounds(
     if (searched.kind !== 'done') return searched;
     const { peaks, holdBack } = searched.value;
     const [strongest] = peaks;
-    if (strongest === undefined || !(strongest.signalToNoise >= options.leastSignalToNoise))
-      return done({ signals, ...endedBy(round, weakWords(round, strongest, options)) });
+    if (strongest === undefined || !(rankedSignalToNoise(strongest, settings.objective) >= options.leastSignalToNoise))
+      return done({ signals, ...endedBy(round, weakWords(round, strongest, { settings, options })) });
     if (strongest.eventCount >= options.leastEvents) signals.push(signalOf(round, strongest, key));
     if (holdBack !== undefined) return done({ signals, ...endedBy(round, holdBack) });
     if (round >= options.rounds) return done({ signals, ...endedBy(round, 'More rounds were not asked for.') });
@@ -53,10 +53,14 @@ async function searchOnce(
 
 const endedBy = (roundsSearched: number, ending: string) => ({ roundsSearched, ending });
 
-function weakWords(round: number, peak: BoxPeak | undefined, { leastSignalToNoise }: SweepSettings): string {
+function weakWords(
+  round: number,
+  peak: BoxPeak | undefined,
+  { settings, options }: { readonly settings: BoxSearchSettings; readonly options: SweepSettings },
+): string {
   if (peak === undefined) return `Round ${round} has no dip at any period.`;
-  const { signalToNoise, periodDays } = peak;
-  return `The strongest signal of round ${round}, ${Number(periodDays.toPrecision(5))} d, has S/N ${signalToNoise.toFixed(2)}, under ${leastSignalToNoise}.`;
+  const strength = rankedSignalToNoise(peak, settings.objective).toFixed(2);
+  return `The strongest signal of round ${round}, ${Number(peak.periodDays.toPrecision(5))} d, has ${settings.objective} ${strength}, under ${options.leastSignalToNoise}.`;
 }
 
 function signalOf(round: number, peak: BoxPeak, key: string): SweptSignal {

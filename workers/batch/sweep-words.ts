@@ -26,7 +26,8 @@ const detailed = ({ sentence, detail }: { readonly sentence: string; readonly de
   detail === undefined ? sentence : `${sentence}\n${detail}`;
 
 function signalWords({ timing, numbers }: SweptSignal): string {
-  const signalToNoise = numbers.signalToNoise === undefined ? '' : ` (S/N ${numbers.signalToNoise.toFixed(1)})`;
+  const strength = numbers.correlatedSignalToNoise ?? numbers.signalToNoise;
+  const signalToNoise = strength === undefined ? '' : ` (S/N ${strength.toFixed(1)})`;
   return `${Number(timing.periodDays.toPrecision(6))} d${signalToNoise}`;
 }
 

@@ -9,7 +9,7 @@ export interface SweepSettings {
   readonly search: Partial<Pick<BoxSearchSettings, 'shortestPeriodDays' | 'longestPeriodDays' | 'oversampling'>>;
   /** Most rounds of the search, each with the signals of the earlier ones masked; 1 to 5. */
   readonly rounds: number;
-  /** A signal becomes a case from this S/N (white noise) on ... */
+  /** A signal becomes a case from this S/N on, as the search's objective has it ... */
   readonly leastSignalToNoise: number;
   /** ... and with at least this many events that have data. */
   readonly leastEvents: number;

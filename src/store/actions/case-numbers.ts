@@ -1,4 +1,5 @@
 import type { BoxPeak, BoxSearchResult, FalseAlarmResult } from '../../contract/search-contract.ts';
+import { rankedSignalToNoise } from '../../core/box-search-settings.ts';
 import { correlatedSigmaAt, correlatedSignalToNoise } from '../../core/correlated-noise.ts';
 import type { Ephemeris } from '../../core/ephemeris.ts';
 import { falseAlarmProbability } from '../../core/extreme-value.ts';
@@ -38,7 +39,7 @@ export function numbersOfPeak(
   falseAlarm: FalseAlarmResult | undefined,
 ): CaseNumbers {
   const { boxDepth, boxDepthError, signalToNoise, correlatedSignalToNoise: correlated, sde, eventCount } = peak;
-  const ranked = search.settings.objective === 'white noise S/N' ? signalToNoise : correlated;
+  const ranked = rankedSignalToNoise(peak, search.settings.objective);
   return {
     key: search.key,
     boxDepth,
