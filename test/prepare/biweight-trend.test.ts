@@ -1,21 +1,11 @@
 import { describe, expect, it } from 'vitest';
 import { iteratedBiweightLocation } from '../../src/core/biweight.ts';
-import { createCheckpoint } from '../../workers/checkpoint.ts';
-import { locateByBiweight } from '../../workers/prepare/detrend/biweight.ts';
-import { fitSlidingTrend } from '../../workers/prepare/detrend/sliding-trend.ts';
 import { seedRandom } from '../reference/search/seeded-series.ts';
 import { makeColumn, makeJob, makeLightCurve, prepare, sentenceOf } from './light-curve.ts';
+import { trendOf as trendBy } from './trend-of.ts';
 
-async function trendOf(time: Float64Array, flux: Float64Array, windowDays: number, weight?: Uint8Array) {
-  const hasWeight = weight ?? new Uint8Array(time.length).fill(1);
-  const trend = await fitSlidingTrend(
-    { time, flux, hasWeight, splits: [], protectedEvents: [] },
-    windowDays,
-    locateByBiweight,
-    createCheckpoint(() => false),
-  );
-  return trend!;
-}
+const trendOf = (time: Float64Array, flux: Float64Array, windowDays: number, hasWeight?: Uint8Array) =>
+  trendBy({ kind: 'biweight', windowDays }, time, flux, hasWeight && { hasWeight });
 
 const times = (length: number, cadence: number): Float64Array => Float64Array.from({ length }, (_, i) => i * cadence);
 
@@ -56,6 +46,20 @@ describe('biweight trend', () => {
     const trend = await trendOf(time, flux, 1, weight);
     for (let i = 20; i < 380; i += 1) expect(Math.abs(trend[i]! - 1 - 0.001 * time[i]!)).toBeLessThan(5e-4);
     expect((await trendOf(time, flux, 1, new Uint8Array(400))).every((value) => value === 1)).toBe(true);
+  });
+});
+
+describe('a second trend of the same points', () => {
+  it('takes over the windows that did not change, and is what a fresh one is', async () => {
+    const random = seedRandom(4);
+    const time = times(3000, 1 / 48).map((at, i) => at + (i > 1400 ? 2 : 0));
+    const flux = time.map((at) => 1 + 0.01 * Math.sin(at) + 0.001 * random.normal());
+    const hasWeight = Uint8Array.from(time, (_, i) => (i % 211 === 0 || (i > 700 && i < 790) ? 0 : 1));
+    const detrend = { kind: 'biweight', windowDays: 1.5 } as const;
+    const before = { hasWeight: new Uint8Array(3000).fill(1), trend: await trendBy(detrend, time, flux) };
+    const fresh = await trendBy(detrend, time, flux, { hasWeight });
+    expect(await trendBy(detrend, time, flux, { hasWeight, before })).toEqual(fresh);
+    expect(fresh).not.toEqual(before.trend);
   });
 });
 

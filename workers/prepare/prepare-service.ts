@@ -14,7 +14,10 @@ export function createPrepareService(): PrepareWorker {
       jobs.run(job.jobId, async (isCancelled) =>
         transferArrays(await prepareSeries(job, createCheckpoint(isCancelled))),
       ),
-    findCommonModes: async (job) => transferArrays(findCommonModes(job)),
+    findCommonModes: (job) =>
+      jobs.run(job.jobId, async (isCancelled) =>
+        transferArrays(await findCommonModes(job, createCheckpoint(isCancelled))),
+      ),
     measureDepthLoss: (job) =>
       jobs.run(job.jobId, (isCancelled) => measureDepthLoss(job, createCheckpoint(isCancelled))),
     cancel: async (jobId) => jobs.cancel(jobId),

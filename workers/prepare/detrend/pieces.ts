@@ -4,7 +4,11 @@ export interface Piece {
   readonly end: number;
 }
 
-/** The runs of points without a longer gap and without a split. @param splits indices of points that begin a piece */
+/**
+ * The runs of points without a longer gap and without a split.
+ *
+ * @param splits indices of points that begin a piece
+ */
 export function piecesOf(time: Float64Array, splits: readonly number[], longestGapDays: number): Piece[] {
   const begins = new Set(splits);
   const pieces: Piece[] = [];

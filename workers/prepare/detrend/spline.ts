@@ -1,139 +1,106 @@
 import { MAD_TO_SIGMA, medianInPlace } from '../../../src/core/robust-statistics.ts';
-import { bridgeTrend } from './bridge-trend.ts';
-import { type Piece, piecesOf } from './pieces.ts';
-import type { TrendInput } from './trend-input.ts';
+import { fitByPieces, LEAST_MEMBERS, type PiecePoints } from './fit-by-pieces.ts';
+import { addBending, basisAt, evaluateSpline, intervalOf, type Knots, ORDER, solveBands } from './spline-basis.ts';
+import type { Detrender } from './trend-input.ts';
 
 const CLIP_SIGMA = 3;
-const MOST_ROUNDS = 6;
-/** Of second differences, against the points of one knot interval: bridges empty intervals, bends nothing else. */
-const PENALTY = 1e-4;
-const ORDER = 4;
+const MOST_ROUNDS = 10;
+/** B-splines in one `knotDays`: enough that the penalty alone, and not the basis, limits what is followed. */
+const INTERVALS_PER_SCALE = 4;
 
 /**
- * A cubic spline of least squares with knots every `knotDays` and a light penalty on its second differences (P-spline,
- * Eilers & Marx 1996, Stat. Sci. 11, 89), refitted without points beyond 3 robust sigma on either side until none is
- * left to drop. Features much shorter than the distance of knots are not followed. Pieces end at splits and at gaps
- * longer than the distance of knots.
- *
- * @returns length n, in the unit of flux; 1 everywhere where no piece has points
+ * A penalised cubic spline: least squares with a penalty on the integral of the squared second derivative (O'Sullivan
+ * 1986, Stat. Sci. 1, 502), on B-splines four to a `knotDays`, refitted without points beyond 3 robust sigma, low and
+ * high, until no more change. The penalty is set so that a sine of period 2 `knotDays`, the shortest that knots
+ * `knotDays` apart could carry, keeps half of its amplitude: a sine of angular frequency w keeps 1 / (1 + penalty
+ * w^4 / points per day) of it (Silverman 1984, Ann. Stat. 12, 898).
  */
-export function fitSplineTrend(input: TrendInput, knotDays: number): Float64Array {
-  const { time, splits } = input;
-  const trend = new Float64Array(time.length).fill(Number.NaN);
-  for (const piece of piecesOf(time, splits, knotDays)) fitPiece(input, piece, knotDays, trend);
-  bridgeTrend(time, trend);
-  return trend;
-}
+export const spline: Detrender<'spline'> = {
+  scaleDays: ({ knotDays }) => knotDays,
+  scaleName: 'knot distance',
+  leastCadences: () => LEAST_MEMBERS,
+  fit: ({ knotDays }, input) => fitByPieces(input, knotDays, (piece) => fillSpline(piece, knotDays)),
+};
 
-function fitPiece({ time, flux, hasWeight }: TrendInput, { first, end }: Piece, knotDays: number, trend: Float64Array) {
-  const used = hasWeight.slice(first, end);
-  const start = time[first]!;
-  const intervals = Math.max(1, Math.round((time[end - 1]! - start) / knotDays));
-  const width = (time[end - 1]! - start) / intervals || 1;
-  const scratch = new Float64Array(end - first);
-  for (let round = 0; round < MOST_ROUNDS; round += 1) {
-    const coefficients = fitCoefficients(time, flux, used, { first, end }, { start, width, intervals });
-    if (coefficients === undefined) return;
-    for (let i = first; i < end; i += 1) trend[i] = evaluate(coefficients, (time[i]! - start) / width, intervals);
-    if (clip(flux, trend, used, first, scratch) === 0) return;
+export function fillSpline(piece: PiecePoints, knotDays: number, mostRounds: number = MOST_ROUNDS): true {
+  const { time, memberTime, memberFlux, trend } = piece;
+  const length = time.at(-1)! - time[0]!;
+  const intervals = Math.max(1, Math.ceil((length / knotDays) * INTERVALS_PER_SCALE));
+  const knots = { start: time[0]!, width: length / intervals || 1, intervals };
+  const penalty = penaltyOf(memberTime, knotDays);
+  const used = new Uint8Array(memberTime.length).fill(1);
+  let coefficients: Float64Array | undefined;
+  for (let round = 0; round < mostRounds; round += 1) {
+    const next = fitCoefficients(memberTime, memberFlux, used, knots, penalty);
+    if (next === undefined) break;
+    coefficients = next;
+    if (!clip(memberTime, memberFlux, coefficients, knots, used)) break;
   }
-}
-
-interface Knots {
-  readonly start: number;
-  readonly width: number;
-  readonly intervals: number;
-}
-
-/** Values of the four cubic B-splines at a place in an interval, 0 to 1. de Boor (1978), A Practical Guide to Splines. */
-function basisAt(x: number, into: Float64Array): void {
-  const rest = 1 - x;
-  into[0] = (rest * rest * rest) / 6;
-  into[1] = (3 * x * x * x - 6 * x * x + 4) / 6;
-  into[2] = (3 * rest * rest * rest - 6 * rest * rest + 4) / 6;
-  into[3] = (x * x * x) / 6;
-}
-
-const intervalOf = (place: number, intervals: number): number =>
-  Math.max(0, Math.min(intervals - 1, Math.floor(place)));
-
-function evaluate(coefficients: Float64Array, place: number, intervals: number): number {
-  const interval = intervalOf(place, intervals);
+  if (coefficients === undefined) return true;
   const basis = new Float64Array(ORDER);
-  basisAt(place - interval, basis);
-  let sum = 0;
-  for (let k = 0; k < ORDER; k += 1) sum += basis[k]! * coefficients[interval + k]!;
-  return sum;
+  for (let i = 0; i < time.length; i += 1) {
+    // Beyond its points a spline runs straight on, and away.
+    if (time[i]! < memberTime[0]! || time[i]! > memberTime.at(-1)!) continue;
+    trend[i] = evaluateSpline(coefficients, knots, time[i]!, basis);
+  }
+  return true;
 }
 
-/** Normal equations in bands of four, with the penalty; undefined where there are no points. */
+/** In days^3, for points of weight 1; the points per day are those of the usual distance between neighbours. */
+export function penaltyOf(memberTime: Float64Array, knotDays: number): number {
+  const steps = new Float64Array(memberTime.length - 1);
+  for (let i = 0; i < steps.length; i += 1) steps[i] = memberTime[i + 1]! - memberTime[i]!;
+  const mean = (memberTime.at(-1)! - memberTime[0]!) / Math.max(1, steps.length);
+  const cadenceDays = medianInPlace(steps) || mean || knotDays;
+  return (knotDays / Math.PI) ** 4 / cadenceDays;
+}
+
+/** Undefined where the points do not hold the spline. */
 function fitCoefficients(
   time: Float64Array,
   flux: Float64Array,
   used: Uint8Array,
-  { first, end }: Piece,
-  { start, width, intervals }: Knots,
+  knots: Knots,
+  penalty: number,
 ): Float64Array | undefined {
-  const count = intervals + ORDER - 1;
-  const bands = new Float64Array(count * ORDER);
-  const right = new Float64Array(count);
+  const right = new Float64Array(knots.intervals + ORDER - 1);
+  const bands = new Float64Array(right.length * ORDER);
   const basis = new Float64Array(ORDER);
-  let points = 0;
-  for (let i = first; i < end; i += 1) {
-    if (used[i - first] === 0) continue;
-    points += 1;
-    const place = (time[i]! - start) / width;
-    const interval = intervalOf(place, intervals);
+  const level = flux[0]!;
+  for (let i = 0; i < time.length; i += 1) {
+    if (used[i] === 0) continue;
+    const place = (time[i]! - knots.start) / knots.width;
+    const interval = intervalOf(place, knots.intervals);
     basisAt(place - interval, basis);
     for (let row = 0; row < ORDER; row += 1) {
-      right[interval + row]! += basis[row]! * flux[i]!;
-      for (let column = row; column < ORDER; column += 1)
-        bands[(interval + row) * ORDER + column - row]! += basis[row]! * basis[column]!;
+      right[interval + row] = right[interval + row]! + basis[row]! * (flux[i]! - level);
+      for (let column = row; column < ORDER; column += 1) {
+        const at = (interval + row) * ORDER + column - row;
+        bands[at] = bands[at]! + basis[row]! * basis[column]!;
+      }
     }
   }
-  if (points < ORDER) return undefined;
-  addPenalty(bands, count, (PENALTY * points) / intervals);
-  return solveBands(bands, right, count);
+  addBending(bands, knots, penalty);
+  return solveBands(bands, right)?.map((value) => value + level);
 }
 
-function addPenalty(bands: Float64Array, count: number, strength: number): void {
-  const difference = [1, -2, 1];
-  for (let i = 0; i + 2 < count; i += 1)
-    for (let row = 0; row < 3; row += 1)
-      for (let column = row; column < 3; column += 1)
-        bands[(i + row) * ORDER + column - row]! += strength * difference[row]! * difference[column]!;
-}
-
-/** Cholesky's factors of a symmetric matrix of which each row holds its diagonal and the three entries right of it. */
-function solveBands(bands: Float64Array, right: Float64Array, count: number): Float64Array | undefined {
-  for (let row = 0; row < count; row += 1) {
-    const pivot = bands[row * ORDER]!;
-    if (!(pivot > 0)) return undefined;
-    for (let k = 1; k < ORDER && row + k < count; k += 1) {
-      const factor = bands[row * ORDER + k]! / pivot;
-      for (let column = k; column < ORDER; column += 1)
-        bands[(row + k) * ORDER + column - k]! -= factor * bands[row * ORDER + column]!;
-      right[row + k]! -= factor * right[row]!;
-    }
+/** Judges every member anew against the spline. @returns whether any changed its place */
+function clip(
+  time: Float64Array,
+  flux: Float64Array,
+  coefficients: Float64Array,
+  knots: Knots,
+  used: Uint8Array,
+): boolean {
+  const basis = new Float64Array(ORDER);
+  const off = time.map((at, i) => Math.abs(flux[i]! - evaluateSpline(coefficients, knots, at, basis)));
+  const limit = CLIP_SIGMA * MAD_TO_SIGMA * medianInPlace(off.slice());
+  if (!(limit > 0)) return false;
+  let changed = false;
+  for (let i = 0; i < time.length; i += 1) {
+    const next = off[i]! <= limit ? 1 : 0;
+    if (next !== used[i]) changed = true;
+    used[i] = next;
   }
-  for (let row = count - 1; row >= 0; row -= 1) {
-    let sum = right[row]!;
-    for (let k = 1; k < ORDER && row + k < count; k += 1) sum -= bands[row * ORDER + k]! * right[row + k]!;
-    right[row] = sum / bands[row * ORDER]!;
-  }
-  return right;
-}
-
-function clip(flux: Float64Array, trend: Float64Array, used: Uint8Array, first: number, scratch: Float64Array): number {
-  let count = 0;
-  for (let i = 0; i < used.length; i += 1)
-    if (used[i] === 1) scratch[count++] = Math.abs(flux[first + i]! - trend[first + i]!);
-  const limit = CLIP_SIGMA * MAD_TO_SIGMA * medianInPlace(scratch, count);
-  let clipped = 0;
-  for (let i = 0; i < used.length; i += 1) {
-    if (used[i] === 0 || !(limit > 0) || Math.abs(flux[first + i]! - trend[first + i]!) <= limit) continue;
-    used[i] = 0;
-    clipped += 1;
-  }
-  return clipped;
+  return changed;
 }
