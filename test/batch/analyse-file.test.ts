@@ -75,7 +75,9 @@ describe('analyseFile', () => {
     };
     const result = await analysed(job);
     expect(result.signals).toEqual([]);
-    expect(result.ending).toMatch(/^The strongest signal of round 1, .* has correlated noise S\/N [0-6]\.\d\d, under 7\.1\.$/);
+    expect(result.ending).toMatch(
+      /^The strongest signal of round 1, .* has correlated noise S\/N [0-6]\.\d\d, under 7\.1\.$/,
+    );
   });
 
   it('gives equal results for equal jobs and leaves the bytes as they are', async () => {
